@@ -6,6 +6,7 @@
     │   ├── RangeError       a value outside the range its clause allows
     │   ├── TableError       a row, column or key of a job's input files
     │   └── SheetError       a cell of a notebook
+    │       └── NeedsSheet   the sheet it takes a value from has not run yet
     ├── FormulaError         a formula is written in a way that cannot run or be typeset
     │   └── LayoutError      the typeset line does not compute what the function computes
     ├── LedgerError          an entry without a source, an unknown name, a circular reference
@@ -25,6 +26,7 @@ __all__ = [
     "InputError",
     "LayoutError",
     "LedgerError",
+    "NeedsSheet",
     "Problem",
     "RangeError",
     "RefusedError",
@@ -105,6 +107,12 @@ class TableError(InputError):
 
 class SheetError(InputError):
     """A cell of a notebook asks for something that cannot be done."""
+
+
+class NeedsSheet(SheetError):
+    """A cell takes a value from a sheet whose results are not there; `sheet` names it."""
+
+    sheet = ""
 
 
 class FormulaError(CalcpackError):

@@ -210,6 +210,8 @@ def quantity(value: float, dimension: Dimension, system: System = US) -> pint.Qu
 @cache
 def factor(unit: str, system: System = US) -> float:
     """How many coherent units make one `unit`; 1.0 exactly where they are the same."""
+    if not unit:
+        return 1.0
     coherent = _parse_unit(coherent_unit(dimension_of(unit), system))
     size = float(registry().Quantity(1.0, _parse_unit(unit)).m_as(coherent))
     nearest = round(size)

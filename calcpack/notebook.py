@@ -1,0 +1,89 @@
+"""The notebook around a sheet: showing items, naming the cell, and short errors in place of tracebacks."""
+
+from __future__ import annotations
+
+import os
+import sys
+from collections.abc import Mapping
+from pathlib import Path
+from typing import Any
+
+from calcpack.errors import CalcpackError
+from calcpack.items import bundle
+
+__all__ = ["cell_key", "cell_name", "show", "short_errors", "watch_files"]
+
+
+def shell() -> Any:
+    """The running IPython shell, or ``None`` in a plain script; IPython is not imported for the question."""
+    interactive = sys.modules.get("IPython")
+    return interactive.get_ipython() if interactive is not None else None
+
+
+def show(item: Mapping[str, Any]) -> None:
+    """Display an item under every type a front end may choose from; nothing in a plain script."""
+    if shell() is not None:
+        from IPython.display import display
+
+        display(bundle(item), raw=True)
+
+
+def cell_name() -> str:
+    """The running cell as a reader counts it, ``cell [7]``; empty in a plain script."""
+    running = shell()
+    return f"cell [{running.execution_count}]" if running is not None else ""
+
+
+def cell_key() -> tuple[str, int]:
+    """The id of the running cell, where the front end sends one, and the count of this execution."""
+    running = shell()
+    if running is None:
+        return "", 0
+    header = getattr(running, "parent_header", None) or {}
+    return str(header.get("metadata", {}).get("cellId", "")), int(running.execution_count)
+
+
+def short_errors() -> None:
+    """Show calcpack's own errors as their message, without the traceback of our code."""
+    running = shell()
+    if running is not None and hasattr(running, "set_custom_exc"):
+        running.set_custom_exc((CalcpackError,), _show_error)
+
+
+def _show_error(running: Any, kind: type[BaseException], error: BaseException, *_: Any) -> None:
+    running._showtraceback(kind, error, [f"{kind.__name__}: {error}"])
+
+
+_watched: set[str] = set()
+
+
+def watch_files(root: Path) -> None:
+    """Note every file of the job that a notebook opens by itself, so that a change of the file runs it again."""
+    target = os.environ.get("CALCPACK_OPENED")
+    if not target or str(root) in _watched:
+        return
+    _watched.add(str(root))
+    prefixes = tuple(str(root / folder) + os.sep for folder in ("inputs", "figures"))
+
+    def hook(event: str, arguments: tuple[Any, ...]) -> None:
+        if event != "open" or not isinstance(arguments[0], (str, os.PathLike)):
+            return
+        path = os.path.abspath(arguments[0])  # noqa: PTH100 - pathlib is too slow for every open of a process
+        if path.startswith(prefixes) and not _quiet:
+            with Path(target).open("a", encoding="utf-8") as notes:
+                notes.write(path[len(str(root)) + 1 :].replace(os.sep, "/") + "\n")
+
+    sys.addaudithook(hook)
+
+
+_quiet: list[str] = []
+
+
+class reading_inputs:
+    """While this holds, reads of input files are noted row by row by the caller and not as whole files."""
+
+    def __enter__(self) -> None:
+        _quiet.append("")
+
+    def __exit__(self, *_: object) -> None:
+        _quiet.pop()

@@ -1,0 +1,352 @@
+"""Trees as LaTeX, MathML, Typst, plain text and speech: one small class for each target."""
+
+from __future__ import annotations
+
+import html
+import re
+from itertools import pairwise
+from typing import Protocol
+
+from calcpack.typeset.names import GREEK
+from calcpack.typeset.tree import Node
+
+__all__ = ["LATEX", "MATHML", "PLAIN", "SPOKEN", "TARGETS", "TYPST", "Target", "emit"]
+
+_RELATIONS = {"<=": "≤", ">=": "≥", "<": "<", ">": ">", "==": "=", "!=": "≠", "=": "="}
+
+
+class Target(Protocol):
+    """How one kind of document writes the parts of an expression."""
+
+    name: str
+
+    def number(self, text: str) -> str:
+        """A number."""
+
+    def value(self, text: str, link: str, sheet: str) -> str:
+        """A substituted value, linked to the entry where it was set; `sheet` names another sheet it comes from."""
+
+    def symbol(self, base: str, subscript: str, primes: int) -> str:
+        """A symbol with its subscript and primes."""
+
+    def sequence(self, parts: list[str]) -> str:
+        """Parts side by side."""
+
+    def fraction(self, above: str, below: str) -> str:
+        """A quotient."""
+
+    def root(self, inner: str) -> str:
+        """A square root."""
+
+    def power(self, base: str, exponent: str) -> str:
+        """A power."""
+
+    def bracket(self, inner: str) -> str:
+        """Round brackets."""
+
+    def function(self, name: str, arguments: list[str]) -> str:
+        """A function of arguments."""
+
+    def operator(self, sign: str) -> str:
+        """An operator or relation."""
+
+    def word(self, text: str) -> str:
+        """A word between conditions."""
+
+
+def emit(node: Node, target: Target, values: bool = False) -> str:
+    """The expression in the language of a target. With `values`, products get a visible dot throughout."""
+    match node:
+        case ("num", text):
+            return target.number(str(text))
+        case ("value", text, link, sheet):
+            return target.value(text, link, sheet)
+        case ("sym", base, subscript, primes):
+            return target.symbol(base, subscript, primes)
+        case ("seq", parts):
+            return target.sequence([emit(part, target, values) for part in parts])
+        case ("neg", inner):
+            return target.sequence([target.operator("−"), emit(inner, target, values)])
+        case ("add", terms):
+            return _sum(terms, target, values)
+        case ("mul", factors):
+            return _product(factors, target, values)
+        case ("frac", above, below):
+            return target.fraction(emit(above, target, values), emit(below, target, values))
+        case ("sqrt", inner):
+            return target.root(emit(inner, target, values))
+        case ("pow", base, exponent):
+            return target.power(emit(base, target, values), emit(exponent, target, values))
+        case ("paren", inner):
+            return target.bracket(emit(inner, target, values))
+        case ("call", name, arguments):
+            return target.function(name, [emit(argument, target, values) for argument in arguments])
+        case ("rel", sign, left, right):
+            parts = [emit(left, target, values), target.operator(_RELATIONS[sign]), emit(right, target, values)]
+            return target.sequence(parts)
+        case ("and" | "or" as word, parts):
+            written = [emit(part, target, values) for part in parts]
+            joined = [written[0]]
+            for part in written[1:]:
+                joined += [target.word(word), part]
+            return target.sequence(joined)
+        case ("next", sign, inner):
+            return target.sequence([target.operator(sign), emit(inner, target, values)])
+    raise ValueError(f"no such node: {node[0]}")
+
+
+def _sum(terms: tuple[tuple[str, Node], ...], target: Target, values: bool) -> str:
+    parts = []
+    for index, (sign, term) in enumerate(terms):
+        if index or sign == "-":
+            parts.append(target.operator("+" if sign == "+" else "−"))
+        parts.append(emit(term, target, values))
+    return target.sequence(parts)
+
+
+def _product(factors: tuple[Node, ...], target: Target, values: bool) -> str:
+    parts = [emit(factors[0], target, values)]
+    for left, right in pairwise(factors):
+        parts += [target.operator("·" if values or _dotted(left, right) else "juxtaposed"), emit(right, target, values)]
+    return target.sequence(parts)
+
+
+def _dotted(left: Node, right: Node) -> bool:
+    # Symbols stand side by side, as in the code book; quotients and numbers are kept apart by a dot.
+    return left[0] in ("frac", "call") or right[0] in ("frac", "num", "call")
+
+
+class _Latex:
+    name = "latex"
+
+    def number(self, text: str) -> str:
+        return text.replace(",", "{,}")
+
+    def value(self, text: str, link: str, sheet: str) -> str:
+        number, _, unit = text.partition(" ")
+        return self.number(number) + (rf"\ \mathrm{{{unit.replace('·', chr(92) + 'cdot ')}}}" if unit else "")
+
+    def symbol(self, base: str, subscript: str, primes: int) -> str:
+        greek = {letter: f"\\{name}" for name, letter in GREEK.items()}
+        head = greek.get(base, base) + "'" * primes
+        return f"{head}_{{{_upright_latex(subscript)}}}" if subscript else f"{head} "
+
+    def sequence(self, parts: list[str]) -> str:
+        return " ".join(parts)
+
+    def fraction(self, above: str, below: str) -> str:
+        return rf"\frac{{{above}}}{{{below}}}"
+
+    def root(self, inner: str) -> str:
+        return rf"\sqrt{{{inner}}}"
+
+    def power(self, base: str, exponent: str) -> str:
+        return f"{base}^{{{exponent}}}"
+
+    def bracket(self, inner: str) -> str:
+        return rf"\left({inner}\right)"
+
+    def function(self, name: str, arguments: list[str]) -> str:
+        if name == "abs":
+            return rf"\left|{arguments[0]}\right|"
+        known = name if name in ("min", "max", "sin", "cos", "tan", "exp") else None
+        head = rf"\{known}" if known else rf"\operatorname{{{_FUNCTION_NAMES.get(name, name)}}}"
+        return head + self.bracket(r",\ ".join(arguments))
+
+    def operator(self, sign: str) -> str:
+        return {"·": r"\cdot", "−": "-", "≤": r"\leq", "≥": r"\geq", "≠": r"\neq", "juxtaposed": r"\,"}.get(sign, sign)
+
+    def word(self, text: str) -> str:
+        return rf"\ \text{{{text}}}\ "
+
+
+def _upright_latex(subscript: str) -> str:
+    return subscript if len(subscript) == 1 else rf"\mathrm{{{subscript}}}"
+
+
+_FUNCTION_NAMES = {"log": "ln", "log10": "log₁₀", "atan2": "atan2", "ceil": "ceil", "floor": "floor"}
+
+
+class _Mathml:
+    name = "mathml"
+
+    def number(self, text: str) -> str:
+        return f"<mn>{_nospace(text)}</mn>"
+
+    def value(self, text: str, link: str, sheet: str) -> str:
+        inner = _nospace(html.escape(text))
+        beside = f'<span class="from">{html.escape(sheet)}</span>' if sheet else ""
+        return f'<mn><a href="#{html.escape(link)}">{inner}</a>{beside}</mn>' if link else f"<mn>{inner}</mn>"
+
+    def symbol(self, base: str, subscript: str, primes: int) -> str:
+        head, sub = f"<mi>{html.escape(base)}</mi>", f"<mi>{html.escape(subscript)}</mi>"
+        if primes:
+            mark = f"<mo>{'′' * primes}</mo>"
+            return f"<msubsup>{head}{sub}{mark}</msubsup>" if subscript else f"<msup>{head}{mark}</msup>"
+        return f"<msub>{head}{sub}</msub>" if subscript else head
+
+    def sequence(self, parts: list[str]) -> str:
+        return f"<mrow>{''.join(parts)}</mrow>"
+
+    def fraction(self, above: str, below: str) -> str:
+        return f"<mfrac>{above}{below}</mfrac>"
+
+    def root(self, inner: str) -> str:
+        return f"<msqrt>{inner}</msqrt>"
+
+    def power(self, base: str, exponent: str) -> str:
+        return f"<msup>{base}{exponent}</msup>"
+
+    def bracket(self, inner: str) -> str:
+        return f"<mrow><mo>(</mo>{inner}<mo>)</mo></mrow>"
+
+    def function(self, name: str, arguments: list[str]) -> str:
+        if name == "abs":
+            return f"<mrow><mo>|</mo>{arguments[0]}<mo>|</mo></mrow>"
+        inner = "<mo>,</mo>".join(arguments)
+        return f"<mrow><mi>{_FUNCTION_NAMES.get(name, name)}</mi><mo>&#x2061;</mo>{self.bracket(inner)}</mrow>"
+
+    def operator(self, sign: str) -> str:
+        if sign == "juxtaposed":
+            return '<mo lspace="0.12em" rspace="0">&#x2062;</mo>'
+        return f"<mo>{html.escape(sign)}</mo>"
+
+    def word(self, text: str) -> str:
+        return f"<mspace width='0.4em'/><mtext>{text}</mtext><mspace width='0.4em'/>"
+
+
+def _nospace(text: str) -> str:
+    return text.replace(" ", "\u202f")
+
+
+class _Typst:
+    name = "typst"
+
+    def number(self, text: str) -> str:
+        return f'"{text}"'
+
+    def value(self, text: str, link: str, sheet: str) -> str:
+        text = _nospace(text).replace("\\", "\\\\").replace('"', '\\"')
+        if not link:
+            return f'"{text}"'
+        return f'#v("{link}", "{text}", "{sheet}")' if sheet else f'#v("{link}", "{text}")'
+
+    def symbol(self, base: str, subscript: str, primes: int) -> str:
+        head = (base if len(base) == 1 else f'"{base}"') + "'" * primes
+        if not subscript:
+            return head
+        return f"{head}_{subscript}" if len(subscript) == 1 else f'{head}_"{subscript}"'
+
+    def sequence(self, parts: list[str]) -> str:
+        return " ".join(parts)
+
+    def fraction(self, above: str, below: str) -> str:
+        return f"frac({above}, {below})"
+
+    def root(self, inner: str) -> str:
+        return f"sqrt({inner})"
+
+    def power(self, base: str, exponent: str) -> str:
+        return f"attach({base}, t: {exponent})"
+
+    def bracket(self, inner: str) -> str:
+        return f"lr(( {inner} ))"
+
+    def function(self, name: str, arguments: list[str]) -> str:
+        if name == "abs":
+            return f"abs({arguments[0]})"
+        inner = ' "," thin '.join(arguments)
+        return f'op("{_FUNCTION_NAMES.get(name, name)}") {self.bracket(inner)}'
+
+    def operator(self, sign: str) -> str:
+        return {"·": "dot.op", "−": "-", "≤": "<=", "≥": ">=", "≠": "!=", "juxtaposed": "thin"}.get(sign, sign)
+
+    def word(self, text: str) -> str:
+        return f'space "{text}" space'
+
+
+class _Plain:
+    name = "plain"
+
+    def number(self, text: str) -> str:
+        return text
+
+    def value(self, text: str, link: str, sheet: str) -> str:
+        return text
+
+    def symbol(self, base: str, subscript: str, primes: int) -> str:
+        return f"{base}{'′' * primes}{subscript}"
+
+    def sequence(self, parts: list[str]) -> str:
+        return re.sub(r" +", " ", " ".join(parts))
+
+    def fraction(self, above: str, below: str) -> str:
+        return f"{_grouped(above)}/{_grouped(below)}"
+
+    def root(self, inner: str) -> str:
+        return f"√{_grouped(inner)}"
+
+    def power(self, base: str, exponent: str) -> str:
+        return f"{base}^{_grouped(exponent)}"
+
+    def bracket(self, inner: str) -> str:
+        return f"({inner})"
+
+    def function(self, name: str, arguments: list[str]) -> str:
+        return f"|{arguments[0]}|" if name == "abs" else f"{_FUNCTION_NAMES.get(name, name)}({', '.join(arguments)})"
+
+    def operator(self, sign: str) -> str:
+        return "" if sign == "juxtaposed" else sign
+
+    def word(self, text: str) -> str:
+        return text
+
+
+def _grouped(text: str) -> str:
+    return f"({text})" if " " in text.strip() and not text.startswith("(") else text
+
+
+_SPOKEN_LETTERS = {letter: name for name, letter in GREEK.items()}
+_SPOKEN_SIGNS = {
+    "·": "times", "−": "minus", "+": "plus", "≤": "at most", "≥": "at least", "≠": "not equal to", "=": "equals",
+    "<": "less than", ">": "greater than", "juxtaposed": "times",
+}  # fmt: skip
+
+
+class _Spoken(_Plain):
+    name = "spoken"
+
+    def symbol(self, base: str, subscript: str, primes: int) -> str:
+        letters = "".join(_SPOKEN_LETTERS.get(letter, letter) for letter in subscript.replace(",", " "))
+        return " ".join(filter(None, [_SPOKEN_LETTERS.get(base, base), "prime" if primes else "", letters]))
+
+    def fraction(self, above: str, below: str) -> str:
+        return f"{_comma(above)} over {_comma(below)}"
+
+    def root(self, inner: str) -> str:
+        return f"root of {_comma(inner)}"
+
+    def power(self, base: str, exponent: str) -> str:
+        return f"{base} to the power {exponent}"
+
+    def bracket(self, inner: str) -> str:
+        return f"bracket {inner} close"
+
+    def function(self, name: str, arguments: list[str]) -> str:
+        spoken = {"min": "the lesser of", "max": "the greater of", "abs": "the size of"}.get(name, f"{name} of")
+        return f"{spoken} {' and '.join(arguments)}"
+
+    def operator(self, sign: str) -> str:
+        return _SPOKEN_SIGNS.get(sign, sign)
+
+
+def _comma(text: str) -> str:
+    return f"the quantity {text}," if " " in text else text
+
+
+LATEX: Target = _Latex()
+MATHML: Target = _Mathml()
+TYPST: Target = _Typst()
+PLAIN: Target = _Plain()
+SPOKEN: Target = _Spoken()
+TARGETS = {target.name: target for target in (LATEX, MATHML, TYPST, PLAIN, SPOKEN)}

@@ -1,0 +1,198 @@
+"""A recorded evaluation as printed lines: texts for every slot, and the result in the units it is read in."""
+
+from __future__ import annotations
+
+import ast
+from collections.abc import Mapping, Sequence
+from dataclasses import dataclass
+from functools import cache
+from typing import Any
+
+from calcpack import expression
+from calcpack.formula import Formula, Recorded, Recording
+from calcpack.formula_source import UNIT_CONSTANTS, opposite, without_units
+from calcpack.typeset.digits import honest, number_text
+from calcpack.typeset.layout import Layout
+from calcpack.typeset.rows import Printed
+from calcpack.typeset.store import FormulaLayout
+from calcpack.units import US, US_KIP, Dimension, System, coherent_unit, convert, display_unit, plain_unit
+
+__all__ = ["Origin", "PrintedLine", "printed_lines", "system_of", "with_unit"]
+
+
+@dataclass(frozen=True)
+class Origin:
+    """Where a value was set: its entry, and the sheet of that entry where it is another one."""
+
+    id: str
+    sheet: str = ""
+
+
+@dataclass(frozen=True)
+class PrintedLine:
+    """A line as printed: layouts with the texts of their slots, and the result.
+
+    Attributes
+    ----------
+    symbol, layout, values : the line, and what fills its slots
+    conditions : conditions that led to it, each with its values
+    line_result : the result in the unit that the line gives
+    shown : the result in the unit it is read in; the same text where the units are the same
+    """
+
+    symbol: str
+    layout: Layout
+    values: tuple[Printed, ...]
+    conditions: tuple[tuple[Layout, tuple[Printed, ...]], ...]
+    line_result: str
+    shown: str
+
+    def to_json(self) -> dict[str, Any]:
+        """Plain data, for a notebook's output."""
+        return {
+            "symbol": self.symbol,
+            "layout": self.layout.to_json(),
+            "values": _texts(self.values),
+            "conditions": [
+                {"layout": layout.to_json(), "values": _texts(values)} for layout, values in self.conditions
+            ],
+            "line_result": self.line_result,
+            "shown": self.shown,
+        }
+
+    @classmethod
+    def from_json(cls, data: Mapping[str, Any]) -> PrintedLine:
+        """The line that `to_json` wrote."""
+        conditions = tuple((Layout.from_json(item["layout"]), _printed(item["values"])) for item in data["conditions"])
+        layout = Layout.from_json(data["layout"])
+        return cls(data["symbol"], layout, _printed(data["values"]), conditions, data["line_result"], data["shown"])
+
+
+def _texts(values: Sequence[Printed]) -> list[list[str]]:
+    return [[value.text, value.link, value.sheet] for value in values]
+
+
+def _printed(data: Sequence[Sequence[str]]) -> tuple[Printed, ...]:
+    return tuple(Printed(*item) for item in data)
+
+
+def printed_lines(
+    recording: Recording, layouts: FormulaLayout, origins: Mapping[str, Origin], targets: Sequence[Origin]
+) -> list[PrintedLine]:
+    """Print a recording.
+
+    Parameters
+    ----------
+    recording : the evaluation
+    layouts : the layouts of its formula
+    origins : for each argument, where its value was set
+    targets : for each line that ran, the entry it makes
+    """
+    system = system_of(recording.formula)
+    values = dict(recording.arguments)
+    known = dict(origins)
+    dimensions = dict(recording.formula.arguments)
+    lines = []
+    for recorded, target in zip(recording.lines, targets, strict=True):
+        lines.append(_print(recorded, layouts, system, _Scope(recording.formula, values, dimensions, known)))
+        values[recorded.line.target] = recorded.value
+        dimensions[recorded.line.target] = recorded.line.dimension
+        known[recorded.line.target] = target
+    return lines
+
+
+@dataclass(frozen=True)
+class _Scope:
+    """What is known where a line runs: values, dimensions and origins by symbol."""
+
+    formula: Formula
+    values: Mapping[str, float]
+    dimensions: Mapping[str, Dimension]
+    origins: Mapping[str, Origin]
+
+
+def _print(recorded: Recorded, layouts: FormulaLayout, system: System, scope: _Scope) -> PrintedLine:
+    line = recorded.line
+    tests = [test if held else opposite(test) for test, held in recorded.conditions]
+    condition_names = [name for test in tests for name in expression.names(test) if name not in UNIT_CONSTANTS]
+    names = tuple(dict.fromkeys([*line.names, *condition_names]))
+    scaled = [convert(scope.values[name], coherent_unit(scope.dimensions[name], system)) for name in names]
+    unit = coherent_unit(line.dimension, system)
+    result = convert(recorded.value, unit)
+
+    def evaluate(values: Sequence[float]) -> float:
+        given = dict(zip(names, values, strict=True))
+        for test in tests:
+            if not expression.evaluate(_plain(test), given, condition=True):
+                raise ValueError("printed with so few figures, the condition does not hold")
+        return float(eval(line.code, scope.formula.function.__globals__, given))
+
+    texts, text = honest(evaluate, scaled, result)
+    fills = {
+        name: Printed(with_unit(text, coherent_unit(scope.dimensions[name], system)), *_link(scope.origins[name]))
+        for name, text in zip(names, texts, strict=True)
+    }
+    conditions = tuple(
+        (layout, _fill(layout, fills)) for layout in (layouts.conditions[ast.unparse(test)] for test in tests)
+    )
+    layout = layouts.lines[line.index]
+    line_result = with_unit(text, unit)
+    return PrintedLine(
+        line.target, layout, _fill(layout, fills), conditions, line_result, _shown(recorded, system, line_result)
+    )
+
+
+def _plain(test: ast.expr) -> str:
+    return expression.infix(without_units(test))
+
+
+def _link(origin: Origin) -> tuple[str, str]:
+    return origin.id, origin.sheet
+
+
+def _fill(layout: Layout, fills: Mapping[str, Printed]) -> tuple[Printed, ...]:
+    filled = []
+    for slot in layout.slots:
+        if slot.kind == "symbol":
+            filled.append(fills[slot.text])
+        elif slot.kind == "const":
+            filled.append(Printed("π"))
+        else:
+            filled.append(Printed(with_unit(_constant_text(slot.text), slot.unit)))
+    return tuple(filled)
+
+
+@cache
+def _constant_text(text: str) -> str:
+    from calcpack.typeset.digits import rounded
+
+    whole = rounded(float(text), 12)
+    return whole.rstrip("0").rstrip(".") if "." in whole and "×" not in whole else whole
+
+
+def _shown(recorded: Recorded, system: System, line_result: str) -> str:
+    dimension = recorded.line.dimension
+    unit = display_unit(dimension)
+    if system is US_KIP and coherent_unit(dimension, US_KIP).startswith("ksi"):
+        unit = "ksi"
+    if unit == coherent_unit(dimension, system):
+        return line_result
+    return with_unit(number_text(convert(recorded.value, unit)), unit)
+
+
+def with_unit(number: str, unit: str) -> str:
+    """A printed number with its unit in trade style."""
+    return f"{number} {plain_unit(unit)}" if unit else number
+
+
+@cache
+def system_of(formula: Formula) -> System:
+    """The coherent system a formula is printed in.
+
+    An empirical formula, or one with a constant in psi, holds in lb, in and psi; one that handles forces or moments
+    is printed in kip, in and ksi, which is coherent too; any other in lb, in and psi.
+    """
+    constants = {name for line in formula.lines() for name in expression.names(line.value)} & {"psi", "lb"}
+    dimensions = [*formula.arguments.values(), *(line.dimension for line in formula.lines())]
+    forces = any(dimension.force and dimension.length != -2 for dimension in dimensions)
+    return US_KIP if forces and not formula.empirical and not constants else US
