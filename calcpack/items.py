@@ -43,7 +43,9 @@ def markdown(item: Item) -> str:
             status = " *(assumed)*" if item["status"] == "assumed" else ""
             return f"{name} = {_escape(item['shown'])} — {_escape(item['means'])}{status} · {_escape(item['source'])}"
         case "work":
-            return "\n\n".join([f"*{_escape(item['title'])}* · {_escape(item['clause'])}", *map(_line_markdown, lines(item))])
+            return "\n\n".join(
+                [f"*{_escape(item['title'])}* · {_escape(item['clause'])}", *map(_line_markdown, lines(item))]
+            )
         case "verdict":
             return f"{_escape(item['what'])}: {_escape(_compared(item))} → **{item['ratio_text']} {item['verdict']}**"
         case "note":
@@ -62,7 +64,9 @@ def plain(item: Item) -> str:
             return str(item["text"])
         case "given":
             status = " (assumed)" if item["status"] == "assumed" else ""
-            return f"{symbol_text(item['symbol'], PLAIN)} = {item['shown']}  {item['means']}{status}  [{item['source']}]"
+            return (
+                f"{symbol_text(item['symbol'], PLAIN)} = {item['shown']}  {item['means']}{status}  [{item['source']}]"
+            )
         case "work":
             return "\n".join([f"{item['title']}  [{item['clause']}]", *(_line_plain(line) for line in lines(item))])
         case "verdict":

@@ -156,6 +156,12 @@ class Ledger:
         """Let entries rest on an entry of another sheet, known by its hash alone."""
         self._hashes[identifier] = digest
 
+    def admit_all(self, other: Ledger) -> None:
+        """Admit what another ledger admitted."""
+        for identifier, digest in other._hashes.items():
+            if identifier not in other:
+                self.admit(identifier, digest)
+
     def hash(self, identifier: str) -> str:
         """The content hash of an entry."""
         return self._hashes[identifier]

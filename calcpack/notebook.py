@@ -11,7 +11,7 @@ from typing import Any
 from calcpack.errors import CalcpackError
 from calcpack.items import bundle
 
-__all__ = ["cell_key", "cell_name", "show", "short_errors", "watch_files"]
+__all__ = ["cell_key", "cell_name", "short_errors", "show", "watch_files"]
 
 
 def shell() -> Any:
@@ -23,9 +23,9 @@ def shell() -> Any:
 def show(item: Mapping[str, Any]) -> None:
     """Display an item under every type a front end may choose from; nothing in a plain script."""
     if shell() is not None:
-        from IPython.display import display
+        from IPython.display import publish_display_data
 
-        display(bundle(item), raw=True)
+        publish_display_data(bundle(item))
 
 
 def cell_name() -> str:

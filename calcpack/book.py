@@ -1,0 +1,87 @@
+"""The record a sheet keeps: entries and values in order, their ids, and what each cell set."""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+from dataclasses import dataclass, field
+from typing import Any
+
+from calcpack import notebook
+from calcpack.ledger import Entry, Ledger
+from calcpack.typeset.line import Origin
+from calcpack.units import Dimension
+from calcpack.value import Value
+
+__all__ = ["SheetBook"]
+
+
+@dataclass
+class SheetBook:
+    """Record keeping of a sheet; `calcpack.sheet.Sheet` adds what an author calls."""
+
+    id: str
+    subject: str
+    ledger: Ledger = field(default_factory=Ledger, repr=False, kw_only=True)
+    _values: dict[str, Value] = field(default_factory=dict, repr=False, kw_only=True)
+    _cells: dict[str, tuple[int, list[Entry]]] = field(default_factory=dict, repr=False, kw_only=True)
+
+    def values(self, symbol: str) -> tuple[Value, ...]:
+        """The sheet's values of a symbol, in order of appearance."""
+        return tuple(value for value in self._values.values() if value.entry.symbol == symbol)
+
+    def _free_ids(self, names: Sequence[str]) -> list[str]:
+        taken = {entry.id for entry in self.ledger}
+        free = []
+        for name in names:
+            count, identifier = 1, f"{self.id}/{name}"
+            while identifier in taken:
+                count += 1
+                identifier = f"{self.id}/{name}.{count}"
+            taken.add(identifier)
+            free.append(identifier)
+        return free
+
+    def _keep(self, entry: Entry, dimension: Dimension) -> Value:
+        self.ledger.add(entry)
+        value = Value(entry, dimension, self.id)
+        self._values[entry.id] = value
+        key, count = notebook.cell_key()
+        self._cells.setdefault(key, (count, []))[1].append(entry)
+        return value
+
+    def _begin(self) -> None:
+        """Forget what an earlier execution of the same cell set, so that a cell can be run again."""
+        key, count = notebook.cell_key()
+        if not key or self._cells.get(key, (count, []))[0] == count:
+            return
+        stale = {entry.id for entry in self._cells.pop(key)[1]}
+        stale |= {user for identifier in stale for user in self.ledger.above(identifier)}
+        kept = [entry for entry in self.ledger if entry.id not in stale]
+        self._values = {entry.id: self._values[entry.id] for entry in kept}
+        renewed = Ledger()
+        renewed.admit_all(self.ledger)
+        for entry in kept:
+            renewed.add(entry)
+        self.ledger = renewed
+
+    def _place(self) -> str:
+        cell = notebook.cell_name()
+        return f"sheet {self.id}, {cell}" if cell else f"sheet {self.id}"
+
+    def _show(self, kind: str, entries: Sequence[Entry] = (), reads: Sequence[Any] = (), **item: Any) -> None:
+        notebook.show({"type": kind, "entries": [entry.to_json() for entry in entries], "reads": list(reads), **item})
+
+    def _part(self, part: str | Value) -> dict[str, str]:
+        if isinstance(part, Value):
+            return {
+                "text": part.entry.shown,
+                "link": part.entry.id,
+                "sheet": "" if part.sheet == self.id else part.sheet,
+            }
+        return {"text": str(part), "link": "", "sheet": ""}
+
+    def _side(self, value: Value) -> dict[str, str]:
+        return {"symbol": value.entry.symbol, "shown": value.entry.shown, **self._part(value)}
+
+    def _origin(self, value: Value) -> Origin:
+        return Origin(value.entry.id, "" if value.sheet == self.id else value.sheet)
