@@ -15,7 +15,7 @@ from typing import TYPE_CHECKING, Any
 from calcpack import notebook, symbols
 from calcpack.book import SheetBook
 from calcpack.errors import InputError, Problem, SheetError
-from calcpack.formula import Formula
+from calcpack.formula import Clause, Formula
 from calcpack.ledger import Entry, passes
 from calcpack.typeset.line import Origin, printed_lines
 from calcpack.typeset.store import LayoutStore
@@ -130,11 +130,12 @@ class Sheet(SheetBook):
         self._begin()
         targets = self._free_ids([recorded.line.target for recorded in recording.lines])
         origins = {name: self._origin(value) for name, value in bound.items()}
-        printed = printed_lines(recording, layouts, origins, [Origin(identifier) for identifier in targets])
+        shown = {name: value.entry.shown for name, value in bound.items()}
+        printed = printed_lines(recording, layouts, origins, shown, [Origin(identifier) for identifier in targets])
         entries, known = [], {name: value.entry.id for name, value in bound.items()}
         clause = formula.clause(self._standard(formula))
         for recorded, identifier, line in zip(recording.lines, targets, printed, strict=True):
-            entries.append(self._worked(formula, recorded, identifier, line.shown, known, str(clause)))
+            entries.append(self._worked(formula, recorded, identifier, line.shown, known, clause))
             known[recorded.line.target] = identifier
         lines = [{"id": identifier, **line.to_json()} for identifier, line in zip(targets, printed, strict=True)]
         title = (formula.__doc__ or formula.name).strip().splitlines()[0].rstrip(".")
@@ -351,7 +352,7 @@ class Sheet(SheetBook):
         return named[0] if named else None
 
     def _worked(
-        self, formula: Formula, recorded: Any, identifier: str, shown: str, known: Mapping[str, str], clause: str
+        self, formula: Formula, recorded: Any, identifier: str, shown: str, known: Mapping[str, str], clause: Clause
     ) -> Entry:
         from calcpack import expression
 
@@ -360,7 +361,7 @@ class Sheet(SheetBook):
         names = [*line.names, *(expression.names(expression.parse(condition, True)) if condition else ())]
         return Entry(
             identifier, "worked", line.target, _meaning(line.target, formula), recorded.value,
-            coherent_unit(line.dimension), shown, self.id, clause=clause, expression=line.text,
+            coherent_unit(line.dimension), shown, self.id, clause=clause.number, edition=_edition(clause), expression=line.text,
             where={name: known[name] for name in dict.fromkeys(names)}, condition=condition, formula=formula.name,
         )  # fmt: skip
 
@@ -383,7 +384,7 @@ class Sheet(SheetBook):
         self._show("note", style=style, parts=[self._part(part) for part in parts])
 
 
-def _edition(clause: Any) -> str:
+def _edition(clause: Clause) -> str:
     return clause.standard.name if clause.standard else ""
 
 

@@ -28,6 +28,9 @@ __all__ = [
     "SI",
     "STRESS",
     "US",
+    "US_FT",
+    "US_KIP",
+    "US_KIP_FT",
     "Angle",
     "Area",
     "Count",
@@ -85,8 +88,10 @@ class System:
 
 US = System("US", force="lb", length="in", stress="psi")
 SI = System("SI", force="N", length="mm", stress="MPa")
-# The same formulas hold in kip, in and ksi; lines with forces are printed in it.
+# Homogeneous formulas hold in these as well, and lines are printed in the one that suits their values.
 US_KIP = System("US kip", force="kip", length="in", stress="ksi")
+US_FT = System("US ft", force="lb", length="ft", stress="psf")
+US_KIP_FT = System("US kip ft", force="kip", length="ft", stress="ksf")
 
 RATIO = Dimension("ratio")
 COUNT = Dimension("count")

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import ast
+import re
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
 from functools import cache
@@ -10,12 +11,23 @@ from typing import Any
 
 from calcpack import expression
 from calcpack.formula import Formula, Recorded, Recording
-from calcpack.formula_source import UNIT_CONSTANTS, opposite, without_units
+from calcpack.formula_source import UNIT_CONSTANTS, Line, opposite, without_units
 from calcpack.typeset.digits import honest, number_text
 from calcpack.typeset.layout import Layout
 from calcpack.typeset.rows import Printed
 from calcpack.typeset.store import FormulaLayout
-from calcpack.units import US, US_KIP, Dimension, System, coherent_unit, convert, display_unit, plain_unit
+from calcpack.units import (
+    US,
+    US_FT,
+    US_KIP,
+    US_KIP_FT,
+    Dimension,
+    System,
+    coherent_unit,
+    convert,
+    display_unit,
+    plain_unit,
+)
 
 __all__ = ["Origin", "PrintedLine", "printed_lines", "system_of", "with_unit"]
 
@@ -77,7 +89,11 @@ def _printed(data: Sequence[Sequence[str]]) -> tuple[Printed, ...]:
 
 
 def printed_lines(
-    recording: Recording, layouts: FormulaLayout, origins: Mapping[str, Origin], targets: Sequence[Origin]
+    recording: Recording,
+    layouts: FormulaLayout,
+    origins: Mapping[str, Origin],
+    shown: Mapping[str, str],
+    targets: Sequence[Origin],
 ) -> list[PrintedLine]:
     """Print a recording.
 
@@ -86,15 +102,18 @@ def printed_lines(
     recording : the evaluation
     layouts : the layouts of its formula
     origins : for each argument, where its value was set
+    shown : for each argument, how it is shown where it was set
     targets : for each line that ran, the entry it makes
     """
-    system = system_of(recording.formula)
     values = dict(recording.arguments)
     known = dict(origins)
     dimensions = dict(recording.formula.arguments)
-    lines = []
+    seen = dict(shown)
+    lines: list[PrintedLine] = []
     for recorded, target in zip(recording.lines, targets, strict=True):
-        lines.append(_print(recorded, layouts, system, _Scope(recording.formula, values, dimensions, known)))
+        line = _print(recorded, layouts, _Scope(recording.formula, values, dimensions, known, seen))
+        lines.append(line)
+        seen[line.symbol] = line.shown
         values[recorded.line.target] = recorded.value
         dimensions[recorded.line.target] = recorded.line.dimension
         known[recorded.line.target] = target
@@ -103,19 +122,21 @@ def printed_lines(
 
 @dataclass(frozen=True)
 class _Scope:
-    """What is known where a line runs: values, dimensions and origins by symbol."""
+    """What is known where a line runs: values, dimensions, origins and printed forms by symbol."""
 
     formula: Formula
     values: Mapping[str, float]
     dimensions: Mapping[str, Dimension]
     origins: Mapping[str, Origin]
+    shown: Mapping[str, str]
 
 
-def _print(recorded: Recorded, layouts: FormulaLayout, system: System, scope: _Scope) -> PrintedLine:
+def _print(recorded: Recorded, layouts: FormulaLayout, scope: _Scope) -> PrintedLine:
     line = recorded.line
     tests = [test if held else opposite(test) for test, held in recorded.conditions]
     condition_names = [name for test in tests for name in expression.names(test) if name not in UNIT_CONSTANTS]
     names = tuple(dict.fromkeys([*line.names, *condition_names]))
+    system = system_of(scope.formula, names, line, scope)
     scaled = [convert(scope.values[name], coherent_unit(scope.dimensions[name], system)) for name in names]
     unit = coherent_unit(line.dimension, system)
     result = convert(recorded.value, unit)
@@ -172,9 +193,9 @@ def _constant_text(text: str) -> str:
 
 def _shown(recorded: Recorded, system: System, line_result: str) -> str:
     dimension = recorded.line.dimension
-    unit = display_unit(dimension)
-    if system is US_KIP and coherent_unit(dimension, US_KIP).startswith("ksi"):
-        unit = "ksi"
+    unit = coherent_unit(dimension, system)
+    if system is US or (system is US_KIP and (dimension.force, dimension.length) != (1, -2)):
+        unit = display_unit(dimension)
     if unit == coherent_unit(dimension, system):
         return line_result
     return with_unit(number_text(convert(recorded.value, unit)), unit)
@@ -185,14 +206,23 @@ def with_unit(number: str, unit: str) -> str:
     return f"{number} {plain_unit(unit)}" if unit else number
 
 
-@cache
-def system_of(formula: Formula) -> System:
-    """The coherent system a formula is printed in.
+def system_of(formula: Formula, names: Sequence[str], line: Line, scope: _Scope) -> System:
+    """The coherent system a line is printed in.
 
-    An empirical formula, or one with a constant in psi, holds in lb, in and psi; one that handles forces or moments
-    is printed in kip, in and ksi, which is coherent too; any other in lb, in and psi.
+    An empirical formula, or a line with a constant in psi, holds in lb, in and psi. Any other is printed in kip where
+    it handles forces or moments, and in feet where more of its values are read in feet than in inches.
     """
-    constants = {name for line in formula.lines() for name in expression.names(line.value)} & {"psi", "lb"}
-    dimensions = [*formula.arguments.values(), *(line.dimension for line in formula.lines())]
+    constants = {name for name in expression.names(line.value) if name in UNIT_CONSTANTS}
+    if formula.empirical or constants & {"psi", "lb"}:
+        return US
+    dimensions = [*(scope.dimensions[name] for name in names), line.dimension]
     forces = any(dimension.force and dimension.length != -2 for dimension in dimensions)
-    return US_KIP if forces and not formula.empirical and not constants else US
+    feet = sum(bool(_FEET.search(scope.shown[name])) for name in names)
+    inches = sum(bool(_INCHES.search(scope.shown[name])) for name in names)
+    if feet > inches and not constants:
+        return US_KIP_FT if forces else US_FT
+    return US_KIP if forces else US
+
+
+_FEET = re.compile(r"\bft|psf|ksf|pcf|kcf|plf|klf")
+_INCHES = re.compile(r"\bin|psi|ksi|pci")

@@ -1,0 +1,168 @@
+"""The command line: ``calcpack COMMAND [JOB]``.
+
+Exit status: 0 all is well; 1 the work was done and something is not OK; 2 bad input or a refused request, the
+reason on standard error, nothing written or changed.
+"""
+
+from __future__ import annotations
+
+import argparse
+import json
+import sys
+from collections.abc import Callable, Sequence
+from pathlib import Path
+from typing import TYPE_CHECKING, TextIO
+
+from calcpack.errors import CalcpackError
+
+if TYPE_CHECKING:
+    from calcpack.job import Job
+    from calcpack.package.gate import Open
+
+__all__ = ["main"]
+
+OK, NOT_OK, REFUSED = 0, 1, 2
+
+
+def main(arguments: Sequence[str] | None = None) -> int:
+    """Run one command and return its exit status."""
+    for stream in (sys.stdout, sys.stderr):
+        if hasattr(stream, "reconfigure"):
+            stream.reconfigure(encoding="utf-8", errors="replace")
+    options = _parser().parse_args(arguments)
+    try:
+        return int(options.run(options))
+    except CalcpackError as error:
+        print(f"{type(error).__name__}: {error}", file=sys.stderr)
+    except KeyboardInterrupt:
+        print("stopped; nothing was written", file=sys.stderr)
+    except BrokenPipeError:
+        sys.stderr.close()
+    except OSError as error:
+        print(f"cannot read or write {error.filename}: {error.strerror}", file=sys.stderr)
+    return REFUSED
+
+
+def _parser() -> argparse.ArgumentParser:
+    parser = argparse.ArgumentParser(prog="calcpack", description="Calculation packages for reinforced concrete.")
+    parser.add_argument("--version", action="version", version=_version())
+    commands = parser.add_subparsers(title="commands", required=True, metavar="COMMAND")
+    for name, run, text in _COMMANDS:
+        command = commands.add_parser(name, help=text, description=text[0].upper() + text[1:] + ".")
+        command.set_defaults(run=run)
+        if name != "validation":
+            command.add_argument("job", nargs="?", default=".", type=Path, help="job folder (default: where you stand)")
+        if name == "check":
+            command.add_argument("--json", action="store_true", help="one JSON object on standard output")
+        if name == "trace":
+            command.add_argument("name", help="an entry id such as A-03/l_d, or a symbol")
+    return parser
+
+
+def _version() -> str:
+    from calcpack.package.release import release
+
+    return f"calcpack {release()}"
+
+
+def _start(options: argparse.Namespace) -> int:
+    from calcpack.job.starting import start
+
+    made = start(options.job)
+    print(f"made {options.job}:")
+    for path in made:
+        print(f"  {path}")
+    print(f"next: fill in job.toml, then: calcpack draft {options.job}")
+    return OK
+
+
+def _check(options: argparse.Namespace) -> int:
+    from calcpack.package.gate import open_items
+    from calcpack.package.members import check_members
+    from calcpack.package.reporting import check_json, check_text
+
+    job = _job(options)
+    checks = check_members(job)
+    found = open_items(job, None, checks)
+    if options.json:
+        print(json.dumps(check_json(job, checks, found), indent=1, ensure_ascii=False, allow_nan=False))
+    else:
+        print(check_text(job, checks, found))
+    return _status(job, found)
+
+
+def _draft(options: argparse.Namespace) -> int:
+    from calcpack.package.build import draft
+    from calcpack.package.reporting import build_text
+
+    job = _job(options)
+    built, folder = draft(job, _progress())
+    print(build_text(built, folder, "draft written"))
+    return _status(job, built.open)
+
+
+def _issue(options: argparse.Namespace) -> int:
+    from calcpack.package.build import issue
+    from calcpack.package.reporting import build_text
+
+    job = _job(options)
+    built, folder, written = issue(job, _progress())
+    assert job.newest is not None
+    what = (
+        f"revision {job.newest.letter} issued"
+        if written
+        else f"revision {job.newest.letter} is issued already, unchanged"
+    )
+    print(build_text(built, folder, what))
+    return _status(job, built.open)
+
+
+def _trace(options: argparse.Namespace) -> int:
+    from calcpack.package.build import ledger_of
+    from calcpack.package.tracing import trace
+
+    print(trace(ledger_of(_job(options), _progress()).ledger, options.name))
+    return OK
+
+
+def _validation(options: argparse.Namespace) -> int:
+    from calcpack import validation
+
+    del options
+    print(validation.table())
+    return OK if all(case.holds for case in validation.run()) else NOT_OK
+
+
+def _status(job: Job, found: Sequence[Open]) -> int:
+    from calcpack.package.gate import is_final
+
+    final = job.newest is not None and is_final(job.newest.purpose)
+    return NOT_OK if any(item.kind == "ratio" or (final and item.blocks) for item in found) else OK
+
+
+def _job(options: argparse.Namespace) -> Job:
+    from calcpack.job import load
+
+    return load(options.job)
+
+
+def _progress(stream: TextIO | None = None) -> Callable[[str], None]:
+    """A printer of progress for a person at a terminal; silent in a pipe."""
+    out = stream or sys.stderr
+    if not out.isatty():
+        return lambda _: None
+
+    def say(text: str) -> None:
+        print(f"  {text}", file=out, flush=True)
+
+    return say
+
+
+_COMMANDS: tuple[tuple[str, Callable[[argparse.Namespace], int], str], ...] = (
+    ("start", _start, "make a job folder that already issues"),
+    ("check", _check, "check the members of the schedules"),
+    ("draft", _draft, "run the sheets and write the package as it stands to draft/"),
+    ("issue", _issue, "issue the newest revision of job.toml to record/issued/"),
+    ("trace", _trace, "print where a value comes from and what it goes into"),
+    ("validation", _validation, "run the published cases this release is validated against"),
+)

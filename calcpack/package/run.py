@@ -1,0 +1,335 @@
+"""Run a job's notebooks, each in a kernel of its own, from clean state; unchanged ones are taken from the last run.
+
+A notebook runs again when its code changed, when a row, given or value it read changed, when a file it opened
+changed, or when the program did. Each run says why. A notebook that takes a value from a sheet that has not run yet
+is put back until that sheet is done; notebooks that wait for each other are a circular reference.
+"""
+
+from __future__ import annotations
+
+import hashlib
+import json
+import os
+import tempfile
+from collections.abc import Callable, Iterator, Sequence
+from concurrent.futures import FIRST_COMPLETED, Future, ThreadPoolExecutor, wait
+from dataclasses import dataclass, field
+from pathlib import Path
+from typing import Any
+
+from calcpack.carrying import leave, results_folder
+from calcpack.errors import LedgerError, Problem, SheetError
+from calcpack.items import MIME
+from calcpack.job import Job
+from calcpack.ledger import Entry, Ledger
+from calcpack.package.reads import Inputs, file_digest
+from calcpack.package.release import release_key
+
+__all__ = ["Executed", "items_of", "run_sheets", "sheet_id"]
+
+_WORKERS = 2
+
+
+@dataclass(frozen=True)
+class Executed:
+    """A notebook after its run.
+
+    Attributes
+    ----------
+    path : of the notebook, relative to the job
+    notebook : the executed notebook (nbformat), with its outputs
+    reason : why it ran, or an empty string where the last run still holds
+    """
+
+    path: str
+    notebook: Any
+    reason: str
+
+    @property
+    def id(self) -> str:
+        """The sheet's id."""
+        return sheet_id(self.notebook)
+
+
+def items_of(notebook: Any) -> Iterator[tuple[int, dict[str, Any]]]:
+    """Every item of an executed notebook with the number of its cell, in order."""
+    for index, cell in enumerate(notebook["cells"]):
+        for output in cell.get("outputs", ()):
+            if MIME in output.get("data", {}):
+                yield index, output["data"][MIME]
+
+
+def sheet_id(notebook: Any) -> str:
+    """The id of the sheet a notebook makes; empty where it makes none."""
+    return next((str(item["id"]) for _, item in items_of(notebook) if item["type"] == "sheet"), "")
+
+
+def run_sheets(job: Job, progress: Callable[[str], None] = lambda _: None) -> list[Executed]:
+    """Run what has to run.
+
+    Returns
+    -------
+    one record for each notebook, in package order
+
+    Raises
+    ------
+    SheetError : cells that failed, in all notebooks at once; notebooks that make no sheet, or wait for each other
+    """
+    run = _Run(job, progress)
+    run.everything()
+    return [run.done[path] for path in run.paths]
+
+
+@dataclass
+class _Run:
+    """One run over a job's notebooks; mutable, because it is a schedule being worked off."""
+
+    job: Job
+    progress: Callable[[str], None]
+    done: dict[Path, Executed] = field(default_factory=dict)
+    ledgers: dict[str, Ledger] = field(default_factory=dict)
+    failures: list[Problem] = field(default_factory=list)
+    records: dict[Path, dict[str, Any] | None] = field(default_factory=dict)
+    reasons: dict[Path, str] = field(default_factory=dict)
+    _last: tuple[int, int] = (-1, -1)
+
+    def __post_init__(self) -> None:
+        self.paths = self.job.sheets()
+        self.cache = self.job.root / ".calcpack" / "runs"
+        self.results = results_folder(self.job.root)
+        self.inputs = Inputs(self.job)
+        self.waiting: dict[Path, str] = {}
+
+    def everything(self) -> None:
+        self.results.mkdir(parents=True, exist_ok=True)
+        for old in self.results.glob("*.json"):
+            old.unlink()
+        todo, running = list(self.paths), dict[Future[Any], Path]()
+        with ThreadPoolExecutor(_WORKERS) as pool:
+            while todo or running:
+                for path in [path for path in todo if self.ready(path)]:
+                    todo.remove(path)
+                    reason = self.stale(path)
+                    if reason == _LATER:
+                        todo.append(path)
+                    elif reason:
+                        running[pool.submit(_execute, self.job.root, path)] = path
+                        self.progress(f"running {path.name}: {reason}")
+                        self.reasons[path] = reason
+                if not running:
+                    if self.progressed(todo):
+                        continue
+                    break
+                finished, _ = wait(running, return_when=FIRST_COMPLETED)
+                for future in finished:
+                    path = running.pop(future)
+                    if needed := self.finish(path, future.result()):
+                        self.waiting[path] = needed
+                        todo.append(path)
+        if todo and not self.failures:
+            raise self.circular(todo)
+        if self.failures:
+            raise SheetError(f"{len(self.failures)} of {len(self.paths)} notebooks failed", self.failures)
+
+    def progressed(self, todo: Sequence[Path]) -> bool:
+        """Whether anything moved since the last look; without that, what is left waits for itself."""
+        state = (len(todo), len(self.done))
+        moved, self._last = state != self._last, state
+        return bool(todo) and moved
+
+    def ready(self, path: Path) -> bool:
+        return self.waiting.get(path, "") in {"", *self.ledgers}
+
+    def stale(self, path: Path) -> str:
+        """Why the notebook has to run, `_LATER` where a sheet it reads is not done, empty where the last run holds."""
+        kept = self.kept(path)
+        if kept is None:
+            return "first run" if path not in self.waiting else f"took a value from sheet {self.waiting[path]}"
+        if kept["source"] != _source_key(path):
+            return "its code changed"
+        if kept["release"] != release_key():
+            return "the program changed"
+        for name in kept["opened"]:
+            if file_digest(self.job.root / name) != kept["opened"][name]:
+                return f"{name} changed"
+        for key, digest in kept["reads"]:
+            if key.startswith("sheet "):
+                sheet, identifier = key.split(" ", 2)[1:]
+                if sheet not in self.ledgers:
+                    return _LATER if self.may_come(sheet, path) else f"sheet {sheet} is gone"
+                found = self.ledgers[sheet].hash(identifier) if identifier in self.ledgers[sheet] else ""
+                if found != digest:
+                    return f"{identifier} changed"
+            elif self.inputs.digest(key) != digest:
+                return f"{key} changed"
+        self.settle(path, kept["notebook"], "")
+        return ""
+
+    def may_come(self, sheet: str, path: Path) -> bool:
+        others = [other for other in self.paths if other not in self.done and other != path]
+        return any((self.kept(other) or {}).get("sheet") in (sheet, None) for other in others)
+
+    def kept(self, path: Path) -> dict[str, Any] | None:
+        if path not in self.records:
+            try:
+                self.records[path] = dict(json.loads((self.cache / f"{path.stem}.json").read_text("utf-8")))
+            except (OSError, ValueError):
+                self.records[path] = None
+        return self.records[path]
+
+    def finish(self, path: Path, outcome: _Outcome) -> str:
+        """Take in the outcome of a run; returns the sheet that has to run first, if any."""
+        if outcome.needs:
+            return outcome.needs
+        name = f"sheets/{path.name}"
+        if outcome.failure:
+            self.failures.append(outcome.failure)
+            self.progress(f"failed  {path.name}")
+            return ""
+        if not sheet_id(outcome.notebook):
+            problem = Problem("no sheet", "one Sheet(id, subject) in each notebook", "sheet = Sheet('C-01', '…')", name)
+            self.failures.append(problem)
+            return ""
+        self.settle(path, outcome.notebook, self.reasons.get(path, ""))
+        record = {
+            "source": _source_key(path), "release": release_key(), "sheet": self.done[path].id,
+            "reads": _reads(self.done[path].notebook),
+            "opened": {file: file_digest(self.job.root / file) for file in outcome.opened},
+            "notebook": outcome.notebook,
+        }  # fmt: skip
+        self.cache.mkdir(parents=True, exist_ok=True)
+        _replace(self.cache / f"{path.stem}.json", json.dumps(record, ensure_ascii=False))
+        self.progress(f"done    {path.name}")
+        return ""
+
+    def settle(self, path: Path, notebook: Any, reason: str) -> None:
+        import nbformat
+
+        node = nbformat.from_dict(notebook)
+        executed = Executed(f"sheets/{path.name}", node, reason)
+        if executed.id in self.ledgers:
+            other = next(item.path for item in self.done.values() if item.id == executed.id)
+            problem = Problem(
+                f"sheet id {executed.id} twice", "an id of its own for each sheet", f"see {other}", executed.path
+            )
+            self.failures.append(problem)
+        self.done[path] = executed
+        ledger, entries = Ledger(), []
+        for _, item in items_of(node):
+            for key, digest in item.get("reads", ()):
+                if key.startswith("sheet "):
+                    ledger.admit(key.split(" ", 2)[2], digest)
+            for data in item["entries"]:
+                entries.append(Entry.from_json(data))
+                ledger.add(entries[-1])
+        self.ledgers[executed.id] = ledger
+        leave(self.results, executed.id, ledger, entries)
+
+    def circular(self, todo: Sequence[Path]) -> SheetError | LedgerError:
+        wants = {path: self.waiting.get(path, "?") for path in todo}
+        names = {(self.kept(path) or {}).get("sheet") or path.stem for path in todo}
+        if len(todo) > 1 or set(wants.values()) & names:
+            chain = "; ".join(f"{path.name} takes a value from sheet {sheet}" for path, sheet in wants.items())
+            return LedgerError(f"circular reference between sheets: {chain}")
+        have = f"sheets that ran: {', '.join(sorted(self.ledgers)) or 'none'}"
+        problems = [Problem(f"{path.name} takes a value from sheet {sheet}", have) for path, sheet in wants.items()]
+        return SheetError("a sheet that is not there", problems)
+
+
+_LATER = "later"
+
+
+@dataclass(frozen=True)
+class _Outcome:
+    """What came of executing a notebook: the executed one, or a failure, or the sheet it has to wait for."""
+
+    notebook: Any = None
+    opened: tuple[str, ...] = ()
+    failure: Problem | None = None
+    needs: str = ""
+
+
+def _execute(root: Path, path: Path) -> _Outcome:
+    import nbformat
+    from nbclient.exceptions import CellExecutionError, DeadKernelError
+
+    notebook = nbformat.read(path, as_version=4)
+    for cell in notebook.cells:
+        if cell.cell_type == "code":
+            cell.outputs, cell.execution_count = [], None
+    with tempfile.TemporaryDirectory(prefix="cp") as scratch:
+        opened = Path(scratch) / "opened"
+        environment = {**_environment(root, scratch), "CALCPACK_OPENED": str(opened)}
+        try:
+            _client(notebook, path, Path(scratch)).execute(env=environment)
+        except CellExecutionError as error:
+            return _failed(notebook, path, error)
+        except DeadKernelError:
+            return _Outcome(
+                failure=Problem("the kernel died", "a notebook that runs", "run it by hand", f"sheets/{path.name}")
+            )
+        files = tuple(sorted(set(opened.read_text("utf-8").split("\n")) - {""})) if opened.exists() else ()
+    return _Outcome(json.loads(nbformat.writes(notebook)), files)
+
+
+def _environment(root: Path, scratch: str) -> dict[str, str]:
+    # The user's own IPython and matplotlib settings must not reach a calculation, nor be written to.
+    return {
+        **os.environ,
+        "CALCPACK_RESULTS": str(results_folder(root)),
+        "IPYTHONDIR": f"{scratch}/ipython",
+        "MPLCONFIGDIR": f"{scratch}/matplotlib",
+        "PYTHONHASHSEED": "0",
+        "PYTHONDONTWRITEBYTECODE": "1",
+    }
+
+
+def _client(notebook: Any, path: Path, scratch: Path) -> Any:
+    from jupyter_client.manager import AsyncKernelManager
+    from nbclient import NotebookClient
+
+    class Manager(AsyncKernelManager):
+        """Kernels that talk through files in the scratch folder: no port, no trace elsewhere."""
+
+        def __init__(self, **options: Any) -> None:
+            super().__init__(transport="ipc", connection_file=str(scratch / "k.json"), **options)
+
+    return NotebookClient(
+        notebook,
+        timeout=600,
+        kernel_name="python3",
+        kernel_manager_class=Manager,
+        resources={"metadata": {"path": str(path.parent)}},
+        shutdown_kernel="immediate",
+        store_widget_state=False,
+        record_timing=False,
+        extra_arguments=["--HistoryManager.enabled=False", "--log-level=ERROR"],
+    )
+
+
+def _failed(notebook: Any, path: Path, error: Any) -> _Outcome:
+    if error.ename == "NeedsSheet":
+        return _Outcome(needs=str(error.evalue).split("needs sheet ", 1)[1].split("\n", 1)[0].strip())
+    cell = next(
+        (cell for cell in notebook.cells if any(output.output_type == "error" for output in cell.get("outputs", ()))),
+        None,
+    )
+    place = f"sheets/{path.name}, cell [{cell.execution_count}]" if cell else f"sheets/{path.name}"
+    source = next((line for line in cell.source.splitlines() if line.strip()), "") if cell else ""
+    return _Outcome(failure=Problem(f"{error.ename}: {error.evalue}", f"in: {source}", "correct the cell", place))
+
+
+def _reads(notebook: Any) -> list[list[str]]:
+    return [list(read) for _, item in items_of(notebook) for read in item.get("reads", ())]
+
+
+def _source_key(path: Path) -> str:
+    cells = json.loads(path.read_text("utf-8")).get("cells", [])
+    kept = [[cell["cell_type"], "".join(cell["source"])] for cell in cells]
+    return hashlib.sha256(json.dumps(kept).encode()).hexdigest()
+
+
+def _replace(path: Path, text: str) -> None:
+    partial = path.with_name(f".{path.name}.{os.getpid()}")
+    partial.write_text(text, "utf-8")
+    partial.replace(path)
