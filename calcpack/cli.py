@@ -166,3 +166,7 @@ _COMMANDS: tuple[tuple[str, Callable[[argparse.Namespace], int], str], ...] = (
     ("trace", _trace, "print where a value comes from and what it goes into"),
     ("validation", _validation, "run the published cases this release is validated against"),
 )
+
+
+if __name__ == "__main__":
+    sys.exit(main())

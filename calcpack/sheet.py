@@ -13,19 +13,17 @@ from pathlib import Path
 from typing import TYPE_CHECKING, Any
 
 from calcpack import notebook, symbols
-from calcpack.book import SheetBook
 from calcpack.errors import InputError, Problem, SheetError
 from calcpack.formula import Clause, Formula
 from calcpack.ledger import Entry, passes
+from calcpack.scheduled import Scheduled
 from calcpack.typeset.line import Origin, printed_lines
 from calcpack.typeset.store import LayoutStore
 from calcpack.units import RATIO, Measured, coherent_unit, read
 from calcpack.value import Value, ratio_text, shown_text
 
 if TYPE_CHECKING:
-    from calcpack.aci318.editions import Edition
     from calcpack.figures import Figure
-    from calcpack.job import Job
 
 __all__ = ["Sheet", "Value"]
 
@@ -34,7 +32,7 @@ _STATUS = ("confirmed", "assumed")
 
 
 @dataclass
-class Sheet(SheetBook):
+class Sheet(Scheduled):
     """A calculation sheet, one for each notebook.
 
     Parameters
@@ -59,20 +57,13 @@ class Sheet(SheetBook):
             problem = Problem(f"Sheet({self.id!r}, {self.subject!r})", "an id like C-01 and a subject", "give both")
             raise SheetError("sheet", [problem], notebook.cell_name())
         self._root = find(self.job or Path.cwd())
-        self._job: Job = load(self._root)
+        self._job = load(self._root)
         self._store = LayoutStore(self._root / ".calcpack" / "layouts.json")
         notebook.watch_files(self._root)
         codes = self._job.codes
         self._show(
             "sheet", id=self.id, subject=self.subject, concrete=codes.concrete, reads=[["job codes", repr(codes)]]
         )
-
-    @property
-    def code(self) -> Edition:
-        """The provisions of the job's edition of ACI 318, by the role they serve."""
-        from calcpack.aci318.editions import edition
-
-        return edition(self._job.codes.concrete)
 
     def given(
         self,
@@ -361,7 +352,8 @@ class Sheet(SheetBook):
         names = [*line.names, *(expression.names(expression.parse(condition, True)) if condition else ())]
         return Entry(
             identifier, "worked", line.target, _meaning(line.target, formula), recorded.value,
-            coherent_unit(line.dimension), shown, self.id, clause=clause.number, edition=_edition(clause), expression=line.text,
+            coherent_unit(line.dimension), shown, self.id,
+            clause=clause.number, edition=_edition(clause), expression=line.text,
             where={name: known[name] for name in dict.fromkeys(names)}, condition=condition, formula=formula.name,
         )  # fmt: skip
 

@@ -229,7 +229,7 @@ def convert(value: float, unit: str, system: System = US) -> float:
     return value / factor(unit, system)
 
 
-_NUMBER = r"[-+]?(?:\d{1,3}(?:,\d{3})+(?:\.\d+)?|\d+\.?\d*|\.\d+)(?:[eE][-+]?\d+)?"
+_NUMBER = r"[-+]?(?:[0-9]{1,3}(?:,[0-9]{3})+(?:\.[0-9]+)?|[0-9]+\.?[0-9]*|\.[0-9]+)(?:[eE][-+]?[0-9]+)?"
 _FRACTION = re.compile(r"(?P<sign>-?)(?:(?P<whole>\d+)[ -])?(?P<top>\d+)/(?P<bottom>[1-9]\d*)(?P<unit>\s+\D.*|)$")
 _FEET_INCHES = re.compile(r"(?P<feet>\d+)'\s*-?\s*(?:(?P<rest>[\d ./-]+)\")?$")
 _PLAIN = re.compile(rf"(?P<number>{_NUMBER})\s*(?P<unit>.*)$")
@@ -291,13 +291,20 @@ def _parse_text(text: str, name: str) -> tuple[float, str]:
     return float(match["number"].replace(",", "")), match["unit"].strip()
 
 
+_LONGEST = 60
+_FACTOR = r"\(?(?:1|[A-Za-z_]+(?:\^-?[0-9])?)\)?"
+_UNIT = re.compile(rf"{_FACTOR}(?:[*/ -]{_FACTOR})*")
+
+
 @cache
 def _parse_unit(unit: str) -> Any:
     text = unit.replace("·", "*").replace("²", "^2").replace("³", "^3").replace("⁴", "^4").replace("%", "percent")
-    if not re.fullmatch(r"[A-Za-z_0-9*/^()\s-]*", text):
+    text = re.sub(r"\s*([*/^])\s*", r"\1", text.strip().replace("**", "^"))
+    # One-digit powers, and never a power of a power: no text can make the parser compute for long.
+    if text and (len(text) > _LONGEST or not _UNIT.fullmatch(text)):
         raise _unknown_unit(unit)
     try:
-        return registry().parse_units(re.sub(r"(?<=[A-Za-z])-(?=[A-Za-z])", "*", text.replace("^", "**").strip()))
+        return registry().parse_units(re.sub(r"[ -](?=[A-Za-z(])", "*", text).replace("^", "**"))
     except Exception as error:
         raise _unknown_unit(unit) from error
 
