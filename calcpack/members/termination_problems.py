@@ -1,0 +1,191 @@
+"""What is wrong with a row of the anchorage schedule, and which conditions of its provision it does not meet."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+
+from calcpack.aci318.bars import BARS, NO_11
+from calcpack.aci318.editions import Edition
+from calcpack.aci318.limits import CONCRETE, YIELD_LEAST
+from calcpack.errors import Problem, RangeError
+from calcpack.formula import Limit
+from calcpack.members.results import Requirement
+from calcpack.members.termination import COATINGS, KINDS, TerminationLike, place
+
+__all__ = ["refuse_problems", "requirements"]
+
+_LARGEST = 1e30
+_SMALLEST = 1e-9
+_LENGTHS = ("c_b", "clear_cover", "clear_spacing", "side_cover", "tail_cover", "available", "spacing")
+_BY_TEST = ("straight tension", "lap tension", "straight compression")
+
+
+def refuse_problems(row: TerminationLike, edition: Edition) -> None:
+    """Raise everything that is wrong with a row, at once.
+
+    Raises
+    ------
+    RangeError : a value outside the range of its clause, or one that the check needs and that is missing
+    """
+    problems = [*_words(row), *_sizes(row), *_materials(row, edition), *_lengths(row), *_areas(row), *_coating(row)]
+    if problems:
+        raise RangeError(f"{row.mark}: {row.kind}", problems, place(row))
+
+
+def _words(row: TerminationLike) -> Iterator[Problem]:
+    if row.kind not in KINDS:
+        yield Problem(f"kind = {row.kind!r}", f"one of {', '.join(KINDS)}")
+    if row.coating not in COATINGS:
+        yield Problem(f"coating = {row.coating!r}", f"one of {', '.join(COATINGS)}")
+    if row.lap_class not in (None, "A", "B"):
+        yield Problem(f"lap_class = {row.lap_class!r}", "A, B or blank")
+
+
+def _sizes(row: TerminationLike) -> Iterator[Problem]:
+    if row.bar not in BARS:
+        allowed = ", ".join(f"#{size}" for size in BARS)
+        yield Problem(f"bar = #{row.bar}", f"one of {allowed} (ASTM A615, A706)")
+    elif row.bar > NO_11.size and row.kind in _TO_NO_11:
+        yield Problem(
+            f"bar = #{row.bar}", f"#11 and smaller ({_TO_NO_11[row.kind]})", "use another anchorage or splice"
+        )
+
+
+_TO_NO_11 = {"headed": "25.4.4.1", "lap tension": "25.5.1.1", "lap compression": "25.5.1.1"}
+
+
+def _materials(row: TerminationLike, edition: Edition) -> Iterator[Problem]:
+    yield from _limited("f_c", row.f_c, "psi", CONCRETE)
+    yield from _limited("f_y", row.f_y, "psi", YIELD_LEAST)
+    high, clause = edition.f_y_max, "Table 20.2.2.4a"
+    if row.kind == "headed":
+        high, clause = edition.head_f_y_max, "25.4.4.1"
+    yield from _limited("f_y", row.f_y, "psi", Limit("f_y", f"{edition.name} {clause}", high=high))
+    yield from _lightweight(row, edition)
+
+
+def _lightweight(row: TerminationLike, edition: Edition) -> Iterator[Problem]:
+    if row.kind == "headed":
+        limit = Limit("lamb", f"{edition.name} 25.4.4.1, normalweight concrete", values=(1.0,))
+    elif row.kind not in _LIGHTWEIGHT_TABLE or (row.kind == "lap compression" and not _takes_tension_lap(row)):
+        return
+    elif edition.lightweight_by_test and row.kind in _BY_TEST:
+        limit = Limit("lamb", f"{edition.name} 19.2.4", low=0.75, high=1.0)
+    else:
+        limit = Limit("lamb", f"{edition.name} {_LIGHTWEIGHT_TABLE[row.kind]}", values=(0.75, 1.0))
+    yield from _limited("lambda", row.lamb, "", limit)
+
+
+_LIGHTWEIGHT_TABLE = {
+    "straight tension": "Table 25.4.2.5",
+    "lap tension": "Table 25.4.2.5",
+    "lap compression": "Table 25.4.2.5",
+    "hook 90": "Table 25.4.3.2",
+    "hook 180": "Table 25.4.3.2",
+    "straight compression": "Table 25.4.9.3",
+}
+
+
+def _takes_tension_lap(row: TerminationLike) -> bool:
+    """Whether a compression lap is compared with the tension lap, 318-19 25.5.5.1(c)."""
+    return row.kind == "lap compression" and row.f_y > 80_000
+
+
+def _limited(name: str, value: float, unit: str, limit: Limit) -> Iterator[Problem]:
+    if limit.holds(value):
+        return
+    scaled = [value * scale for scale in (100, 1000) if unit == "psi" and limit.low <= value * scale <= 100_000]
+    guess = f"was this meant to be {scaled[0]:,g} psi?" if scaled and value < limit.low else ""
+    yield Problem(f"{name} = {value:,g} {unit}".strip(), limit.words(unit), guess)
+
+
+def _lengths(row: TerminationLike) -> Iterator[Problem]:
+    for name in _LENGTHS:
+        value = getattr(row, name)
+        if value is not None and not _SMALLEST <= value <= _LARGEST:
+            yield Problem(f"{name} = {value:,g} in", "a length above zero", "correct it, or leave it blank")
+    if not 0 <= row.K_tr <= _LARGEST:
+        yield Problem(f"K_tr = {row.K_tr:,g} in", "a length, zero or more (25.4.2)")
+    if row.c_b is not None and row.bar in BARS and _SMALLEST <= row.c_b <= BARS[row.bar].d_b / 2:
+        yield Problem(
+            f"c_b = {row.c_b:,g} in", f"above d_b/2 = {BARS[row.bar].d_b / 2:,g} in: it runs to the bar centre"
+        )
+
+
+def _areas(row: TerminationLike) -> Iterator[Problem]:
+    required, provided = row.A_s_required, row.A_s_provided
+    if required is None and provided is None:
+        return
+    if required is None or provided is None:
+        missing = "A_s_required" if required is None else "A_s_provided"
+        yield Problem(f"{missing} is blank", "both areas or neither (25.4.10.1)", "state both, or leave both blank")
+        return
+    areas = f"A_s_required = {required:,g} in^2, A_s_provided = {provided:,g} in^2"
+    if not _SMALLEST <= required <= provided <= _LARGEST:
+        yield Problem(
+            areas, "above zero, and not more required than provided (25.4.10.1)", "correct them, or leave blank"
+        )
+    elif row.kind == "lap tension" and row.lap_class == "A" and provided < 2 * required:
+        yield Problem(f"lap_class = A, {areas}", "class A from twice the area required (Table 25.5.2.1)", "use class B")
+
+
+def _coating(row: TerminationLike) -> Iterator[Problem]:
+    straight = row.kind in ("straight tension", "lap tension") or _takes_tension_lap(row)
+    if not straight or row.coating not in ("epoxy", "dual") or row.c_b is not None:
+        return
+    missing = [name for name in ("clear_cover", "clear_spacing") if getattr(row, name) is None]
+    if missing:
+        yield Problem(
+            f"coating = {row.coating}, {' and '.join(missing)} blank",
+            "the coating factor depends on clear cover and clear spacing (25.4.2, table of factors)",
+            "state both, or c_b",
+        )
+
+
+def requirements(row: TerminationLike, edition: Edition) -> tuple[Requirement, ...]:
+    """Conditions of the provision that the row shows to be met or not, beside the length."""
+    return (*_close_bars(row, edition), *_stated_c_b(row), *_head_clearances(row, edition))
+
+
+def _centre_spacing(row: TerminationLike) -> float | None:
+    if row.spacing is not None:
+        return row.spacing
+    return None if row.clear_spacing is None else row.clear_spacing + BARS[row.bar].d_b
+
+
+def _close_bars(row: TerminationLike, edition: Edition) -> Iterator[Requirement]:
+    clause = {"straight tension": "25.4.2.2", "lap tension": "25.5.1.5"}.get(row.kind)
+    if clause is None or not edition.close_bars_need_ties or row.f_y < 80_000:
+        return
+    spacing, d_b = _centre_spacing(row), BARS[row.bar].d_b
+    least = f"K_tr = {row.K_tr:,g} in, at least 0.5 d_b = {0.5 * d_b:,g} in"
+    if spacing is None:
+        if row.K_tr < 0.5 * d_b:
+            yield Requirement(clause, f"if bars stand closer than 6 in: {least}", True)
+    elif spacing < 6:
+        yield Requirement(clause, f"bars at {spacing:,g} in, f_y = {row.f_y:,g} psi: {least}", row.K_tr >= 0.5 * d_b)
+
+
+def _stated_c_b(row: TerminationLike) -> Iterator[Requirement]:
+    if row.c_b is None or row.kind not in ("straight tension", "lap tension"):
+        return
+    d_b, spacing = BARS[row.bar].d_b, _centre_spacing(row)
+    largest = [row.clear_cover + d_b / 2] if row.clear_cover is not None else []
+    largest += [spacing / 2] if spacing is not None else []
+    # One per cent for dimensions rounded on the drawing.
+    if largest and row.c_b > 1.01 * min(largest):
+        yield Requirement("2.2", f"c_b = {row.c_b:,g} in, stated cover and spacing give {min(largest):,g} in", False)
+
+
+def _head_clearances(row: TerminationLike, edition: Edition) -> Iterator[Requirement]:
+    if row.kind != "headed":
+        return
+    d_b, spacing = BARS[row.bar].d_b, _centre_spacing(row)
+    if row.clear_cover is not None:
+        text = f"clear cover {row.clear_cover:,g} in, at least 2 d_b = {2 * d_b:,g} in"
+        yield Requirement("25.4.4.1", text, row.clear_cover >= 2 * d_b)
+    if spacing is not None:
+        # 318-14 asks for a clear spacing of 4 d_b, 318-19 for 3 d_b centre to centre.
+        least = edition.head_spacing * d_b
+        text = f"bars at {spacing:,g} in centre to centre, at least {least:,g} in"
+        yield Requirement("25.4.4.1", text, spacing >= least)
