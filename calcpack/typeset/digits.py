@@ -10,7 +10,7 @@ import re
 from collections.abc import Callable, Sequence
 from decimal import ROUND_HALF_EVEN, Decimal
 
-__all__ = ["honest", "last_place", "number_text", "parse_number", "rounded"]
+__all__ = ["constant_text", "honest", "last_place", "number_text", "parse_number", "rounded"]
 
 _EXACT = 6  # a value of at most so many significant digits is printed whole
 _MOST = 13
@@ -31,7 +31,12 @@ def number_text(value: float, extra: int = 0) -> str:
         return "0"
     if _figures(exact) <= _EXACT and -4 <= exact.adjusted() < 8:
         return _plain(exact)
-    return rounded(value, max(_usual(exact) + extra, min(exact.adjusted() + 1, 7) if exact.adjusted() < 8 else 0))
+    return rounded(value, max(_usual(exact) + extra, exact.adjusted() + 1 if exact.adjusted() < 8 else 0))
+
+
+def constant_text(value: float) -> str:
+    """A constant of a line, printed whole."""
+    return rounded(value, max(1, _figures(_clean(value))))
 
 
 def rounded(value: float, figures: int) -> str:

@@ -141,7 +141,7 @@ class _Latex:
         return rf"\sqrt{{{inner}}}"
 
     def power(self, base: str, exponent: str) -> str:
-        return f"{base}^{{{exponent}}}"
+        return f"{{{base}}}^{{{exponent}}}"
 
     def bracket(self, inner: str) -> str:
         return rf"\left({inner}\right)"
@@ -216,7 +216,7 @@ class _Mathml:
 
 
 def _nospace(text: str) -> str:
-    return text.replace(" ", "\u202f")
+    return text.replace(" ", "\u00a0")
 
 
 class _Typst:
@@ -255,7 +255,7 @@ class _Typst:
     def function(self, name: str, arguments: list[str]) -> str:
         if name == "abs":
             return f"abs({arguments[0]})"
-        inner = ' "," thin '.join(arguments)
+        inner = " comma ".join(arguments)
         return f'op("{_FUNCTION_NAMES.get(name, name)}") {self.bracket(inner)}'
 
     def operator(self, sign: str) -> str:
@@ -281,13 +281,13 @@ class _Plain:
         return re.sub(r" +", " ", " ".join(parts))
 
     def fraction(self, above: str, below: str) -> str:
-        return f"{_grouped(above)}/{_grouped(below)}"
+        return f"{_grouped(above)}/{_grouped(below, '/')}"
 
     def root(self, inner: str) -> str:
-        return f"√{_grouped(inner)}"
+        return f"√{_grouped(inner, '/^')}"
 
     def power(self, base: str, exponent: str) -> str:
-        return f"{base}^{_grouped(exponent)}"
+        return f"{base}^{_grouped(exponent, '/')}"
 
     def bracket(self, inner: str) -> str:
         return f"({inner})"
@@ -302,8 +302,18 @@ class _Plain:
         return text
 
 
-def _grouped(text: str) -> str:
-    return f"({text})" if " " in text.strip() and not text.startswith("(") else text
+def _grouped(text: str, also: str = "") -> str:
+    text = text.strip()
+    return f"({text})" if any(sign in text for sign in f" {also}") and not _enclosed(text) else text
+
+
+def _enclosed(text: str) -> bool:
+    depth = 0
+    for place, letter in enumerate(text):
+        depth += (letter == "(") - (letter == ")")
+        if not depth:
+            return place == len(text) - 1 and letter == ")"
+    return False
 
 
 _SPOKEN_LETTERS = {letter: name for name, letter in GREEK.items()}

@@ -9,6 +9,7 @@ from __future__ import annotations
 
 import ast
 import copy
+import itertools
 import math
 import random
 import re
@@ -20,7 +21,8 @@ from typing import Any
 from calcpack import expression
 from calcpack.errors import FormulaError, LayoutError
 from calcpack.formula_source import unit_constant, without_units
-from calcpack.typeset.tree import Node, freeze, infix, simplify, slots
+from calcpack.typeset.latex import read_latex, token_name, token_number
+from calcpack.typeset.tree import Node, children, freeze, infix, rebuild, simplify, slots
 
 __all__ = ["Layout", "Slot", "lay_out", "prove"]
 
@@ -59,7 +61,7 @@ class _Tokens(ast.NodeTransformer):
 
     def token(self, slot: Slot) -> ast.Name:
         self.slots.append(slot)
-        return ast.Name(_token(len(self.slots) - 1))
+        return ast.Name(token_name(len(self.slots) - 1))
 
     def visit_Name(self, node: ast.Name) -> ast.expr:
         return self.token(Slot("const", "pi") if node.id in expression.CONSTANTS else Slot("symbol", node.id))
@@ -87,10 +89,86 @@ def lay_out(node: ast.expr) -> Layout:
     LayoutError : the layout does not compute what the expression computes
     """
     tokens = _Tokens()
-    tree = simplify(_arrange(tokens.visit(copy.deepcopy(node))))
-    layout = Layout(tree, tuple(tokens.slots))
+    tokenised = tokens.visit(copy.deepcopy(node))
+    try:
+        return _proved(_arrange(tokenised), tokens.slots, node)
+    except LayoutError:
+        # handcalcs loses a bracket in some nested lines; its groups laid out apart come out right.
+        return _proved(_in_groups(tokenised), tokens.slots, node)
+
+
+def _proved(tree: Node, filled: list[Slot], node: ast.expr) -> Layout:
+    layout = Layout(_numerators(simplify(tree), filled), tuple(filled))
     prove(layout, node)
     return layout
+
+
+class _Groups(ast.NodeTransformer):
+    """Takes out arguments of functions, and sums inside products, quotients and powers, each for a token."""
+
+    def __init__(self) -> None:
+        self.inner: dict[int, ast.expr] = {}
+
+    def apart(self, node: ast.expr) -> ast.expr:
+        if isinstance(node, ast.Name):
+            return node
+        number = _FIRST_GROUP + len(self.inner)
+        self.inner[number] = node
+        return ast.Name(token_name(number))
+
+    def visit_Call(self, node: ast.Call) -> ast.expr:
+        return ast.Call(node.func, [self.apart(argument) for argument in node.args], [])
+
+    def visit_BinOp(self, node: ast.BinOp) -> ast.expr:
+        outer = isinstance(node.op, (ast.Add, ast.Sub))
+        left = self.visit(node.left) if outer or not _is_sum(node.left) else self.apart(node.left)
+        keep = isinstance(node.op, ast.Add) or not _is_sum(node.right)
+        return ast.BinOp(left, node.op, self.visit(node.right) if keep else self.apart(node.right))
+
+
+_FIRST_GROUP = 1_000_000
+
+
+def _is_sum(node: ast.expr) -> bool:
+    return isinstance(node, ast.UnaryOp) or (isinstance(node, ast.BinOp) and isinstance(node.op, (ast.Add, ast.Sub)))
+
+
+def _in_groups(node: ast.expr) -> Node:
+    groups = _Groups()
+    outer = _arrange(groups.visit(copy.deepcopy(node)))
+    return _put_back(outer, {number: _in_groups(inner) for number, inner in groups.inner.items()})
+
+
+def _put_back(node: Node, groups: dict[int, Node]) -> Node:
+    if node[0] == "slot" and node[1] in groups:
+        inner = groups[node[1]]
+        return ("paren", inner) if inner[0] in ("add", "neg") else inner
+    return rebuild(node, tuple(_put_back(child, groups) for child in children(node)))
+
+
+def _numerators(node: Node, filled: list[Slot]) -> Node:
+    """``a b · c/d`` as one quotient ``a b c/d``, the way it is written; handcalcs puts only the last factor above."""
+    node = rebuild(node, tuple(_numerators(child, filled) for child in children(node)))
+    if node[0] != "mul":
+        return node
+    factors: list[Node] = []
+    for factor in node[1]:
+        above: list[Node] = []
+        while (
+            factor[0] == "frac" and factors and _is_symbol(factors[-1], filled) and factor[1][0] not in ("add", "neg")
+        ):
+            above.insert(0, factors.pop())
+        if above:
+            last = factor[1][1] if factor[1][0] == "mul" else (factor[1],)
+            factor = ("frac", ("mul", (*above, *last)), factor[2])
+        factors.append(factor)
+    return factors[0] if len(factors) == 1 else ("mul", tuple(factors))
+
+
+def _is_symbol(node: Node, filled: list[Slot]) -> bool:
+    if node[0] in ("pow", "sqrt"):
+        return _is_symbol(node[1], filled)
+    return node[0] == "slot" and filled[node[1]].kind == "symbol"
 
 
 def prove(layout: Layout, node: ast.expr, points: int = 12) -> None:
@@ -105,10 +183,9 @@ def prove(layout: Layout, node: ast.expr, points: int = 12) -> None:
         raise LayoutError(f"the layout of {text!r} lost or moved a term")
     plain, printed = expression.infix(without_units(node)), infix(layout.tree)
     condition = isinstance(node, (ast.Compare, ast.BoolOp))
-    generator = random.Random(text)
+    trials = _trials(node, random.Random(text))
     compared = 0
-    for _ in range(points * 10):
-        values = {name: generator.uniform(0.05, 9.0) for name in dict.fromkeys(expression.names(node))}
+    for values in itertools.islice(trials, points * 10):
         numbers = {f"_{index}": _slot_value(slot, values) for index, slot in enumerate(layout.slots)}
         try:
             expected = expression.evaluate(plain, values, condition)
@@ -124,6 +201,18 @@ def prove(layout: Layout, node: ast.expr, points: int = 12) -> None:
             return
     if not compared:
         raise LayoutError(f"{text!r} has no value at any of {points * 10} trial points, so its layout is not proved")
+
+
+def _trials(node: ast.expr, generator: random.Random) -> Iterator[dict[str, float]]:
+    """Trial values of the symbols: small, large, and on both sides of the numbers of the expression."""
+    names = tuple(dict.fromkeys(expression.names(without_units(node))))
+    constants = [part.value for part in ast.walk(node) if isinstance(part, ast.Constant)]
+    numbers = [float(value) for value in constants if isinstance(value, (int, float))]
+    while True:
+        yield {name: generator.uniform(0.05, 9.0) for name in names}
+        yield {name: generator.uniform(0.05, 9.0) for name in names}
+        yield {name: generator.choice((*numbers, 1.0)) * generator.uniform(0.5, 1.5) for name in names}
+        yield {name: generator.uniform(5.0, 900.0) for name in names}
 
 
 def _slot_value(slot: Slot, values: dict[str, float]) -> float:
@@ -143,11 +232,11 @@ def _arrange(node: ast.expr) -> Node:
             parts = tuple(_grouped(part, op) for part in values)
             return ("and" if isinstance(op, ast.And) else "or", parts)
         case ast.Name(id=token):
-            return ("slot", _number(token))
+            return ("slot", token_number(token))
         case ast.UnaryOp(operand=operand):
             inner = _arrange(operand)
             return ("neg", ("paren", inner) if inner[0] in ("add", "neg") else inner)
-    return _read(_handcalcs(ast.unparse(node)))
+    return read_latex(_handcalcs(ast.unparse(node)))
 
 
 _SIGN = {ast.Lt: "<", ast.LtE: "<=", ast.Gt: ">", ast.GtE: ">=", ast.Eq: "==", ast.NotEq: "!="}
@@ -163,22 +252,6 @@ def _chain(operands: list[Node], signs: list[str]) -> Node:
 def _grouped(part: ast.expr, outer: ast.boolop) -> Node:
     inner = _arrange(part)
     return ("paren", inner) if isinstance(outer, ast.And) and isinstance(part, ast.BoolOp) else inner
-
-
-def _token(index: int) -> str:
-    letters = ""
-    index += 1
-    while index:
-        index, rest = divmod(index - 1, 26)
-        letters = chr(97 + rest) + letters
-    return f"q{letters}q"
-
-
-def _number(token: str) -> int:
-    index = 0
-    for letter in token[1:-1]:
-        index = index * 26 + ord(letter) - 96
-    return index - 1
 
 
 class _Placeholder:
@@ -210,125 +283,3 @@ def _handcalcs(text: str) -> str:
     if len(parts) != 4:
         raise LayoutError(f"{text!r} was not laid out as a calculation")
     return parts[2].strip()
-
-
-_TOKEN = re.compile(
-    r"\\text\{QZ(?P<slot>q[a-z]+q)ZQ\}|(?P<cmd>\\[A-Za-z]+|\\.)|(?P<num>\d+(?:\.\d+)?)|(?P<word>[a-z]\w*)|(?P<sign>[-+^_{}(),])"
-)
-_FUNCTION_OF = {r"\ln": "log", r"\arctan": "atan", r"\arcsin": "asin", r"\arccos": "acos"}
-_FUNCTION_OF |= {rf"\{name}": name for name in ("sin", "cos", "tan", "exp", "min", "max")}
-
-
-class _Latex:
-    """A reader of the small LaTeX that handcalcs writes for a calculation."""
-
-    def __init__(self, text: str) -> None:
-        self.text = text
-        self.tokens = list(self._split(text))
-        self.at = 0
-
-    def _split(self, text: str) -> Iterator[tuple[str, str]]:
-        position = 0
-        while position < len(text):
-            if text[position].isspace():
-                position += 1
-                continue
-            match = _TOKEN.match(text, position)
-            if match is None:
-                raise LayoutError(f"cannot read the layout {text!r} at {text[position : position + 20]!r}")
-            position = match.end()
-            kind = str(match.lastgroup)
-            if match[kind] not in (r"\ ", r"\left", r"\right"):
-                yield kind, match[kind]
-
-    def peek(self) -> str:
-        return self.tokens[self.at][1] if self.at < len(self.tokens) else ""
-
-    def take(self, *expected: str) -> tuple[str, str]:
-        if self.at >= len(self.tokens) or (expected and self.peek() not in expected):
-            raise LayoutError(f"cannot read the layout {self.text!r}: found {self.peek()!r}, not {expected}")
-        self.at += 1
-        return self.tokens[self.at - 1]
-
-    def sum(self) -> Node:
-        terms = [("-" if self.peek() == "-" and self.take() else "+", self.product())]
-        while self.peek() in ("+", "-"):
-            terms.append((self.take()[1], self.product()))
-        if len(terms) == 1:
-            return terms[0][1] if terms[0][0] == "+" else ("neg", terms[0][1])
-        return ("add", tuple(terms))
-
-    def product(self) -> Node:
-        factors = [self.power()]
-        while self.peek() == r"\cdot":
-            self.take()
-            factors.append(self.power())
-        return factors[0] if len(factors) == 1 else ("mul", tuple(factors))
-
-    def power(self) -> Node:
-        base = self.atom()
-        if self.peek() == "^":
-            self.take()
-            return ("pow", base, self.group())
-        return base
-
-    def group(self) -> Node:
-        self.take("{")
-        inner = self.sum()
-        self.take("}")
-        return inner
-
-    def bracket(self) -> tuple[Node, ...]:
-        self.take("(")
-        parts = [self.sum()]
-        while self.peek() == ",":
-            self.take()
-            parts.append(self.sum())
-        self.take(")")
-        return tuple(parts)
-
-    def atom(self) -> Node:
-        kind, text = self.take()
-        if kind == "slot":
-            return ("slot", _number(text))
-        if kind == "num":
-            return ("num", text)
-        if text == r"\frac":
-            return ("frac", self.group(), self.group())
-        if text == r"\sqrt":
-            return ("sqrt", self.group())
-        if text == "(":
-            self.at -= 1
-            return ("paren", *self.bracket())
-        name, arguments = self.function(kind, text), self.bracket()
-        return ("call", "atan2" if name == "atan" and len(arguments) == 2 else name, arguments)
-
-    def function(self, kind: str, text: str) -> str:
-        if text in (r"\operatorname", r"\mathrm"):
-            self.take("{")
-            name = self.take()[1]
-            self.take("}")
-        elif text == r"\log":
-            self.take("_")
-            name = "log" + self.digits()
-        else:
-            name = text if kind == "word" else _FUNCTION_OF.get(text, text)
-        if name not in expression.FUNCTIONS:
-            raise LayoutError(f"cannot read the layout {self.text!r}: unknown {name!r}")
-        return name
-
-    def digits(self) -> str:
-        if self.peek() == "{":
-            self.take()
-            digits = self.take()[1]
-            self.take("}")
-            return digits
-        return self.take()[1]
-
-
-def _read(latex: str) -> Node:
-    reader = _Latex(latex)
-    tree = reader.sum()
-    if reader.at != len(reader.tokens):
-        raise LayoutError(f"cannot read the layout {latex!r}: {reader.peek()!r} is left over")
-    return tree

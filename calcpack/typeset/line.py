@@ -6,13 +6,12 @@ import ast
 import re
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
-from functools import cache
 from typing import Any
 
 from calcpack import expression
 from calcpack.formula import Formula, Recorded, Recording
 from calcpack.formula_source import UNIT_CONSTANTS, Line, opposite, without_units
-from calcpack.typeset.digits import honest, number_text
+from calcpack.typeset.digits import constant_text, honest, number_text
 from calcpack.typeset.layout import Layout
 from calcpack.typeset.rows import Printed
 from calcpack.typeset.store import FormulaLayout
@@ -136,7 +135,7 @@ def _print(recorded: Recorded, layouts: FormulaLayout, scope: _Scope) -> Printed
     tests = [test if held else opposite(test) for test, held in recorded.conditions]
     condition_names = [name for test in tests for name in expression.names(test) if name not in UNIT_CONSTANTS]
     names = tuple(dict.fromkeys([*line.names, *condition_names]))
-    system = system_of(scope.formula, names, line, scope)
+    system = system_of(scope.formula, names, line, scope, tests)
     scaled = [convert(scope.values[name], coherent_unit(scope.dimensions[name], system)) for name in names]
     unit = coherent_unit(line.dimension, system)
     result = convert(recorded.value, unit)
@@ -179,16 +178,8 @@ def _fill(layout: Layout, fills: Mapping[str, Printed]) -> tuple[Printed, ...]:
         elif slot.kind == "const":
             filled.append(Printed("π"))
         else:
-            filled.append(Printed(with_unit(_constant_text(slot.text), slot.unit)))
+            filled.append(Printed(with_unit(constant_text(float(slot.text)), slot.unit)))
     return tuple(filled)
-
-
-@cache
-def _constant_text(text: str) -> str:
-    from calcpack.typeset.digits import rounded
-
-    whole = rounded(float(text), 12)
-    return whole.rstrip("0").rstrip(".") if "." in whole and "×" not in whole else whole
 
 
 def _shown(recorded: Recorded, system: System, line_result: str) -> str:
@@ -206,13 +197,15 @@ def with_unit(number: str, unit: str) -> str:
     return f"{number} {plain_unit(unit)}" if unit else number
 
 
-def system_of(formula: Formula, names: Sequence[str], line: Line, scope: _Scope) -> System:
+def system_of(
+    formula: Formula, names: Sequence[str], line: Line, scope: _Scope, tests: Sequence[ast.expr] = ()
+) -> System:
     """The coherent system a line is printed in.
 
-    An empirical formula, or a line with a constant in psi, holds in lb, in and psi. Any other is printed in kip where
-    it handles forces or moments, and in feet where more of its values are read in feet than in inches.
+    An empirical formula, or a line or condition with a constant in psi, holds in lb, in and psi. Any other is printed
+    in kip where it handles forces or moments, and in feet where more of its values are read in feet than in inches.
     """
-    constants = {name for name in expression.names(line.value) if name in UNIT_CONSTANTS}
+    constants = {name for node in (line.value, *tests) for name in expression.names(node) if name in UNIT_CONSTANTS}
     if formula.empirical or constants & {"psi", "lb"}:
         return US
     dimensions = [*(scope.dimensions[name] for name in names), line.dimension]

@@ -6,6 +6,7 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 from functools import cache
 
+from calcpack.typeset.digits import constant_text
 from calcpack.typeset.emit import SPOKEN, Target, emit
 from calcpack.typeset.layout import Layout
 from calcpack.typeset.names import name_tree
@@ -27,7 +28,7 @@ class Printed:
 
 def with_symbols(layout: Layout) -> Node:
     """The tree with every slot filled by its symbol or number."""
-    return _filled(layout.tree, [_symbol_node(slot.kind, slot.text, slot.unit) for slot in layout.slots])
+    return _filled(layout.tree, [_symbol_node(slot.kind, slot.text, slot.unit) for slot in layout.slots], guard=True)
 
 
 def with_values(layout: Layout, printed: Sequence[Printed]) -> Node:
@@ -46,11 +47,7 @@ def _symbol_node(kind: str, text: str, unit: str) -> Node:
 
 @cache
 def _constant(text: str) -> str:
-    from calcpack.typeset.digits import number_text, rounded
-
-    value = float(text)
-    whole = rounded(value, 12)
-    return number_text(value) if len(whole) > 12 else whole.rstrip("0").rstrip(".") if "." in whole else whole
+    return constant_text(float(text))
 
 
 def _filled(node: Node, fills: Sequence[Node], guard: bool = False, inside: str = "") -> Node:
@@ -74,6 +71,8 @@ def _filled(node: Node, fills: Sequence[Node], guard: bool = False, inside: str 
 
 
 def _needs_bracket(fill: Node, inside: str) -> bool:
+    if fill[0] not in ("num", "value"):
+        return (inside == "base" and fill[0] in ("seq", "frac", "add")) or (inside == "term" and fill[0] == "add")
     text = str(fill[1])
     if inside == "base":
         return text.startswith("−") or " " in text or "×" in text

@@ -16,7 +16,7 @@ from calcpack.typeset.layout import Layout, lay_out
 
 __all__ = ["FormulaLayout", "LayoutStore"]
 
-_VERSION = 1  # raise it when layouts of the same source change
+_VERSION = 3  # raise it when layouts of the same source change
 
 
 @dataclass(frozen=True)
@@ -39,9 +39,10 @@ class LayoutStore:
     def __post_init__(self) -> None:
         if self.path is not None and self.path.is_file():
             try:
-                self._kept = json.loads(self.path.read_text("utf-8"))
+                kept = json.loads(self.path.read_text("utf-8"))
             except (OSError, ValueError):
-                self._kept = {}
+                kept = {}
+            self._kept = kept if isinstance(kept, dict) else {}
 
     def layout(self, formula: Formula) -> FormulaLayout:
         """The layout of a formula, from memory, from the kept file, or made and proved now.
@@ -52,11 +53,22 @@ class LayoutStore:
         """
         key = f"{formula.key}-{_VERSION}-{_handcalcs_version()}"
         if key not in self._ready:
-            if key not in self._kept:
-                self._kept[key] = _to_json(_made(formula))
-                self._changed = True
-            self._ready[key] = _from_json(self._kept[key])
+            self._ready[key] = self._read(key, formula) or self._make(key, formula)
         return self._ready[key]
+
+    def _read(self, key: str, formula: Formula) -> FormulaLayout | None:
+        """The kept layout; ``None`` where there is none, or it is damaged."""
+        try:
+            layout = _from_json(self._kept[key])
+        except (AttributeError, KeyError, TypeError, ValueError):
+            return None
+        return layout if set(layout.lines) == {line.index for line in formula.lines()} else None
+
+    def _make(self, key: str, formula: Formula) -> FormulaLayout:
+        layout = _made(formula)
+        self._kept[key] = _to_json(layout)
+        self._changed = True
+        return layout
 
     def save(self) -> None:
         """Write what is new; the file is replaced in one step, so two runs at once cannot tear it."""

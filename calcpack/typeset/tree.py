@@ -113,7 +113,11 @@ def simplify(node: Node) -> Node:
         case ("call", name, arguments):
             return ("call", name, tuple(_bare(argument) for argument in arguments))
         case ("mul", factors):
-            return _gather(factors)
+            return _gather(
+                tuple(
+                    _bare(factor) if factor[0] == "paren" and factor[1][0] == "frac" else factor for factor in factors
+                )
+            )
         case ("add", ((sign, ("mul", (("paren", ("neg", inner)), *rest))), *others)) if sign == "+":
             return ("add", (("-", ("mul", (inner, *rest)) if rest else inner), *others))
         case ("add", ((sign, ("paren", ("neg", inner))), *others)) if sign == "+" and inner[0] != "add":
