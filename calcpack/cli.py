@@ -143,7 +143,7 @@ def _status(job: Job, found: Sequence[Open]) -> int:
 def _job(options: argparse.Namespace) -> Job:
     from calcpack.job import load
 
-    return load(options.job)
+    return load(options.job.absolute())
 
 
 def _progress(stream: TextIO | None = None) -> Callable[[str], None]:

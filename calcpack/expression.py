@@ -55,6 +55,7 @@ _COMPARE: dict[type[ast.cmpop], Callable[[Any, Any], bool]] = {
     ast.NotEq: operator.ne,
 }
 _MAX_LENGTH = 4000
+_MAX_DEPTH = 100
 
 
 @cache
@@ -68,11 +69,23 @@ def parse(text: str, condition: bool = False) -> ast.expr:
     if len(text) > _MAX_LENGTH:
         raise FormulaError(f"expression of {len(text)} characters: at most {_MAX_LENGTH} are read")
     try:
+        if "#" in text or "\\" in text:
+            raise ValueError("Python would leave aside what follows, a reader would not")
         node = ast.parse(text.strip(), mode="eval").body
     except (SyntaxError, ValueError, RecursionError, MemoryError) as error:
         raise FormulaError(f"not an expression: {text!r}") from error
+    _refuse_depth(node, text)
     check(node, condition)
     return node
+
+
+def _refuse_depth(node: ast.expr, text: str) -> None:
+    level: list[ast.AST] = [node]
+    for _ in range(_MAX_DEPTH):
+        level = [child for parent in level for child in ast.iter_child_nodes(parent)]
+        if not level:
+            return
+    raise FormulaError(f"an expression nested deeper than {_MAX_DEPTH} levels is not read: {text[:60]!r}…")
 
 
 def check(node: ast.expr, condition: bool = False) -> None:
@@ -132,11 +145,14 @@ def evaluate(text: str, values: Mapping[str, float], condition: bool = False) ->
     FormulaError : a symbol without a value, or an operation that has no result (a root of a negative number)
     """
     try:
-        return float(_value(parse(text, condition), values))
+        value = float(_value(parse(text, condition), values))
     except KeyError as error:
         raise FormulaError(f"{text!r} needs a value for {error.args[0]}") from error
     except (ArithmeticError, ValueError, TypeError) as error:
         raise FormulaError(f"{text!r} has no value here: {error}") from error
+    if not math.isfinite(value):
+        raise FormulaError(f"{text!r} has no value here: it is not finite")
+    return value
 
 
 def _value(node: ast.expr, values: Mapping[str, float]) -> Any:

@@ -76,8 +76,10 @@ class Limit:
     natural: bool = False
 
     def holds(self, value: float) -> bool:
-        """Whether the value is allowed; NaN never is."""
-        return self.low <= value <= self.high and (not self.values or value in self.values)
+        """Whether the value is allowed; NaN and infinity never are."""
+        return max(self.low, -_LARGEST) <= value <= min(self.high, _LARGEST) and (
+            not self.values or value in self.values
+        )
 
     def words(self, unit: str) -> str:
         """The range in words, with its source."""
@@ -151,7 +153,9 @@ class Formula:
         self.arguments, self.result = read_signature(function)
         self.source, self.body, self.result_name = read_body(function, self.arguments, self.result)
         self._checks = (*_sign_limits(self.arguments, limits), *limits)
-        self._bounds = tuple((limit.symbol, limit.low, limit.high) for limit in self._checks)
+        self._bounds = tuple(
+            (limit.symbol, max(limit.low, -_LARGEST), min(limit.high, _LARGEST)) for limit in self._checks
+        )
         self._lists = tuple(limit for limit in limits if limit.values)
         unknown = [limit.symbol for limit in limits if limit.symbol not in self.arguments]
         if unknown:
@@ -173,7 +177,10 @@ class Formula:
         for limit in self._lists:
             if not limit.holds(arguments[limit.symbol]):
                 self._refuse(arguments)
-        return self.function(**arguments)
+        try:
+            return self.function(**arguments)
+        except (ArithmeticError, ValueError) as error:
+            raise self._no_result(arguments, error) from error
 
     def clause(self, standard: Standard | None = None) -> Clause:
         """The clause in one edition; the first where none is asked for.
@@ -195,11 +202,16 @@ class Formula:
         Raises
         ------
         RangeError : as for a call
-        FormulaError : the recorded result is not the function's own (never expected)
+        FormulaError : a line without a finite real value; a result that is not the function's own (never expected)
         """
         result = self(**arguments)
         environment = dict(arguments)
         lines = tuple(self._run(self.body, environment, ()))
+        for recorded in lines:
+            if isinstance(recorded.value, complex) or not math.isfinite(recorded.value):
+                raise FormulaError(
+                    f"{self.name}: {recorded.line.target} = {recorded.value} is not a finite real number"
+                )
         if not lines or lines[-1].value != result or lines[-1].line.target != self.result_name:
             raise FormulaError(f"{self.name}: the recorded lines give {lines[-1:]}, the function {result!r}")
         return Recording(self, dict(arguments), lines)
@@ -230,18 +242,23 @@ class Formula:
                 side = item.then if truth else item.otherwise
                 yield from self._run(side, environment, (*held, (item.condition, truth)))
 
+    def _no_result(self, arguments: Mapping[str, float], error: Exception) -> RangeError:
+        given = [f"{name} = {arguments[name]:,.10g} {coherent_unit(self.arguments[name])}" for name in self.arguments]
+        problem = Problem(", ".join(map(str.strip, given)), f"arguments for which the equation has a value ({error})")
+        return RangeError(f"{self.name}: no result", [problem])
+
     def _refuse(self, arguments: Mapping[str, float]) -> typing.NoReturn:
         missing = [name for name in self.arguments if name not in arguments]
         if missing:
             raise TypeError(f"{self.name}: missing {', '.join(missing)}")
-        problems = []
+        problems: dict[str, Problem] = {}
         for limit in self._checks:
             value, unit = arguments[limit.symbol], coherent_unit(self.arguments[limit.symbol])
             if not limit.holds(value):
-                given = f"{limit.symbol} = {value:,g} {unit}".strip()
-                problems.append(Problem(given, limit.words(unit), _guess(limit, value, unit)))
+                given = f"{limit.symbol} = {value:,.10g} {unit}".strip()
+                problems[limit.symbol] = Problem(given, limit.words(unit), _guess(limit, value, unit))
         count = f"{len(problems)} argument{'s' if len(problems) > 1 else ''} out of range"
-        raise RangeError(f"{self.name}: {count}", problems)
+        raise RangeError(f"{self.name}: {count}", problems.values())
 
 
 def formula(
@@ -272,14 +289,14 @@ def _sign_limits(arguments: Mapping[str, Dimension], limits: tuple[Limit, ...]) 
         if name in set_by_clause:
             continue
         low, words = _SIGNS[sign]
-        yield Limit(name, words.format(dimension.name), low, _LARGEST, natural=True)
+        yield Limit(name, words.format(dimension.phrase), low, _LARGEST, natural=True)
 
 
 _LARGEST = 1e30
 _SIGNS = {
-    "positive": (math.ulp(0.0), "a {} above zero"),
-    "nonnegative": (0.0, "a {}, zero or more"),
-    "any": (-_LARGEST, "a finite {}"),
+    "positive": (math.ulp(0.0), "{} above zero"),
+    "nonnegative": (0.0, "{}, zero or more"),
+    "any": (-_LARGEST, "{}, a finite number"),
 }
 
 

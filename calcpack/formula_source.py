@@ -82,7 +82,10 @@ def read_signature(function: Callable[..., float]) -> tuple[dict[str, Dimension]
     ------
     FormulaError : an argument that is not keyword-only, or has no dimension
     """
-    hints = typing.get_type_hints(function, include_extras=True)
+    try:
+        hints = typing.get_type_hints(function, include_extras=True)
+    except NameError as error:
+        raise FormulaError(f"{function.__name__}: {error} where its arguments are annotated; import it") from error
     arguments = {}
     for parameter in inspect.signature(function).parameters.values():
         if parameter.kind is not parameter.KEYWORD_ONLY or parameter.default is not parameter.empty:
@@ -107,13 +110,20 @@ def read_body(
     ------
     FormulaError : a statement that cannot be printed as it runs
     """
-    tree = ast.parse(textwrap.dedent(inspect.getsource(function))).body[0]
+    try:
+        tree = ast.parse(textwrap.dedent(inspect.getsource(function))).body[0]
+    except OSError as error:
+        raise FormulaError(f"{function.__name__}: its source cannot be read; define it in a file or a cell") from error
     assert isinstance(tree, ast.FunctionDef)
     statements = tree.body[1:] if ast.get_docstring(tree) is not None else tree.body
     if not statements or not isinstance(last := statements[-1], ast.Return) or not isinstance(last.value, ast.Name):
         raise FormulaError(f"{function.__name__}: the last statement must be 'return' and the name of the result")
     reader = _Reader(function, {**arguments}, last.value.id, result)
+    for name in arguments:
+        reader.refuse_reserved(name)
     body = reader.block(statements[:-1])
+    if not body or last.value.id not in reader.set:
+        raise FormulaError(f"{function.__name__}: {last.value.id} is returned, and not on every path set by a line")
     text = "\n".join(ast.unparse(statement) for statement in statements)
     signature = ", ".join(f"{name}: {dimension.powers}" for name, dimension in arguments.items())
     return f"({signature})\n{text}", body, last.value.id
@@ -127,6 +137,7 @@ class _Reader:
     ) -> None:
         self.function = function
         self.known = known
+        self.set = set(known)
         self.result = result
         self.dimension = dimension
         self.count = 0
@@ -142,24 +153,45 @@ class _Reader:
                 return self.line(target, value, annotation)
             case ast.If(test=test, body=then, orelse=otherwise):
                 expression.check(test, condition=True)
+                opposite(test)
                 self.scope(test)
-                return Branch(test, self.block(then), self.block(otherwise))
+                return Branch(test, *self.sides(then, otherwise))
         raise FormulaError(
             f"{self.function.__name__}: {ast.unparse(statement)!r} cannot be printed; "
             "a formula holds lines 'symbol = expression' and 'if' blocks"
         )
 
+    def sides(
+        self, then: Iterable[ast.stmt], otherwise: Iterable[ast.stmt]
+    ) -> tuple[tuple[Line | Branch, ...], tuple[Line | Branch, ...]]:
+        """Both sides of a branch; after it, a symbol is set where both sides set it."""
+        before = set(self.set)
+        first = self.block(then)
+        after_first, self.set = self.set, before
+        second = self.block(otherwise)
+        self.set &= after_first
+        return first, second
+
+    def refuse_reserved(self, name: str) -> None:
+        if name in expression.FUNCTIONS or name in expression.CONSTANTS or name in UNIT_CONSTANTS:
+            raise FormulaError(f"{self.function.__name__}: {name} has a meaning of its own; choose another symbol")
+
     def line(self, target: str, value: ast.expr, annotation: ast.expr | None) -> Line:
+        self.refuse_reserved(target)
         expression.check(value)
         self.scope(value)
         dimension = self.target_dimension(target, annotation)
         self.known[target] = dimension
+        self.set.add(target)
         self.count += 1
         return Line(target, value, dimension, self.count)
 
     def target_dimension(self, target: str, annotation: ast.expr | None) -> Dimension:
         if annotation is not None:
-            hint = eval(compile(ast.Expression(annotation), "<annotation>", "eval"), self.function.__globals__)
+            try:
+                hint = eval(compile(ast.Expression(annotation), "<annotation>", "eval"), self.function.__globals__)
+            except NameError as error:
+                raise FormulaError(f"{self.function.__name__}: {target}: {error}; import it") from error
             return _dimension(hint, f"{self.function.__name__}: {target}")
         if target == self.result:
             return self.dimension
@@ -173,17 +205,18 @@ class _Reader:
         )
 
     def scope(self, node: ast.expr) -> None:
-        scope = self.function.__globals__
-        for part in ast.walk(node):
-            if isinstance(part, ast.Call) and isinstance(part.func, ast.Name):
-                name = part.func.id
-                if scope.get(name, getattr(builtins, name, None)) is not expression.FUNCTIONS[name]:
-                    raise FormulaError(
-                        f"{self.function.__name__}: {name} is not math's; write 'from math import {name}'"
-                    )
-        for name in expression.names(node):
-            if name not in self.known and not (name in UNIT_CONSTANTS and scope.get(name) == 1.0):
-                raise FormulaError(f"{self.function.__name__}: {name} is neither an argument nor set by a line above")
+        scope = {**self.function.__globals__, **dict.fromkeys(self.function.__code__.co_freevars)}
+        for name in dict.fromkeys(part.id for part in ast.walk(node) if isinstance(part, ast.Name)):
+            wanted = expression.FUNCTIONS.get(name, expression.CONSTANTS.get(name))
+            if wanted is not None and scope.get(name, getattr(builtins, name, None)) != wanted:
+                raise FormulaError(f"{self.function.__name__}: {name} is not math's; write 'from math import {name}'")
+            if wanted is None and name not in self.set and not (name in UNIT_CONSTANTS and scope.get(name) == 1.0):
+                raise FormulaError(
+                    f"{self.function.__name__}: {name} is neither an argument nor set by a line above on every path"
+                )
+        for name in expression.names(without_units(node)):
+            if name in UNIT_CONSTANTS:
+                raise FormulaError(f"{self.function.__name__}: {name} stands alone; write '12*{name}', number first")
 
 
 def flatten(body: Iterable[Line | Branch]) -> Iterator[Line | Branch]:

@@ -93,8 +93,10 @@ class Entry:
 
         Raises
         ------
-        LedgerError : a key is missing, or the kind is unknown
+        LedgerError : a key is missing or holds something else than it should, or the kind is unknown
         """
+        if not isinstance(data, Mapping):
+            raise LedgerError(f"an entry of the ledger is {data!r}, not an object")
         if data.get("kind") not in KINDS:
             raise LedgerError(f"entry {data.get('id')!r}: kind {data.get('kind')!r}, allowed {', '.join(KINDS)}")
         missing = [name for name in (*_COMMON, *_OF_KIND[data["kind"]]) if name not in data and name not in _OPTIONAL]
@@ -102,7 +104,20 @@ class Entry:
             raise LedgerError(f"entry {data.get('id')!r}: no {', '.join(missing)}")
         known = {item.name for item in fields(cls)}
         values = {name: value for name, value in data.items() if name in known}
+        wrong = [f"{name} = {value!r}" for name, value in values.items() if not _fits(name, value)]
+        if wrong:
+            raise LedgerError(f"entry {data.get('id')!r}: {', '.join(wrong)} is not what a ledger holds there")
         return cls(**{**values, "confirmed_by": tuple(values.get("confirmed_by", ()))})
+
+
+def _fits(name: str, value: Any) -> bool:
+    if name in ("value", "ratio"):
+        return (isinstance(value, (int, float)) and not isinstance(value, bool)) or (name == "ratio" and value is None)
+    if name == "where":
+        return isinstance(value, Mapping) and all(isinstance(item, str) for item in value.values())
+    if name == "confirmed_by":
+        return isinstance(value, (list, tuple)) and all(isinstance(item, str) for item in value)
+    return isinstance(value, str)
 
 
 class Ledger:
@@ -319,4 +334,8 @@ def _replayed(entry: Entry, values: dict[str, float]) -> Iterator[Replayed]:
     elif entry.kind == "verdict":
         ratio = values[entry.demand] / values[entry.capacity] if values[entry.capacity] else math.inf
         yield Replayed(entry.id, "demand / capacity", entry.value, ratio)
-        yield Replayed(entry.id, f"verdict {entry.verdict}", 1.0, float((entry.verdict == "OK") == passes(ratio)))
+        if entry.ratio is not None:
+            yield Replayed(entry.id, "ratio", entry.ratio, ratio)
+        yield Replayed(
+            entry.id, f"verdict {entry.verdict}", 1.0, float(entry.verdict == ("OK" if passes(ratio) else "NG"))
+        )

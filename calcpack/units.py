@@ -7,6 +7,7 @@ A dimension is a power of force, length and time; its coherent unit follows from
 from __future__ import annotations
 
 import math
+import numbers
 import re
 from dataclasses import dataclass
 from functools import cache
@@ -73,6 +74,11 @@ class Dimension:
     def powers(self) -> tuple[int, int, int]:
         """Exponents of force, length and time."""
         return self.force, self.length, self.time
+
+    @property
+    def phrase(self) -> str:
+        """The name with its article: ``a length``, ``an area``."""
+        return f"{'an' if self.name[0] in 'aeiou' else 'a'} {self.name}"
 
 
 @dataclass(frozen=True)
@@ -194,9 +200,11 @@ def display_unit(dimension: Dimension, system: System = US) -> str:
 def dimension_of(unit: str) -> Dimension:
     """The dimension of a unit given as text, by its trade name where it has one."""
     parsed = _parse_unit(unit)
-    if "rad" in unit or "deg" in unit:
-        return ANGLE
     powers = dict(parsed.dimensionality)
+    if "rad" in unit or "deg" in unit:
+        if powers:
+            raise _unknown_unit(unit)
+        return ANGLE
     exponents = [powers.pop(key, 0) for key in ("[force]", "[length]", "[time]")]
     if powers or any(exponent != int(exponent) for exponent in exponents):
         raise _unknown_unit(unit)
@@ -231,7 +239,8 @@ def convert(value: float, unit: str, system: System = US) -> float:
 
 _NUMBER = r"[-+]?(?:[0-9]{1,3}(?:,[0-9]{3})+(?:\.[0-9]+)?|[0-9]+\.?[0-9]*|\.[0-9]+)(?:[eE][-+]?[0-9]+)?"
 _FRACTION = re.compile(r"(?P<sign>-?)(?:(?P<whole>\d+)[ -])?(?P<top>\d+)/(?P<bottom>[1-9]\d*)(?P<unit>\s+\D.*|)$")
-_FEET_INCHES = re.compile(r"(?P<feet>\d+)'\s*-?\s*(?:(?P<rest>[\d ./-]+)\")?$")
+_INCHES = r"(?:\d+[ -])?\d+/[1-9]\d*|\d+(?:\.\d*)?|\.\d+"
+_FEET_INCHES = re.compile(rf"(?P<feet>\d+)'(?:\s*-?\s*(?P<rest>{_INCHES})\s*\")?$")
 _PLAIN = re.compile(rf"(?P<number>{_NUMBER})\s*(?P<unit>.*)$")
 
 
@@ -255,7 +264,7 @@ def read(given: object, dimension: Dimension | None, name: str = "value", system
     found = dimension_of(unit) if unit else RATIO
     if dimension is None:
         return Measured(number * factor(unit, system), found, unit, number)
-    if found.powers != dimension.powers:
+    if found.powers != dimension.powers or (found == ANGLE) != (dimension == ANGLE):
         raise _wrong_dimension(name, given, found, dimension, system)
     return Measured(number * (factor(unit, system) if unit else 1.0), dimension, unit, number)
 
@@ -263,10 +272,10 @@ def read(given: object, dimension: Dimension | None, name: str = "value", system
 def _number_and_unit(given: object, name: str) -> tuple[float, str]:
     if isinstance(given, bool) or given is None:
         raise UnitError(name, [Problem(f"{name} = {given}", "a number with its unit", "write e.g. '12 in'")])
-    if isinstance(given, (int, float)):
-        return float(given), ""
     if isinstance(given, str):
         return _parse_text(given, name)
+    if isinstance(given, numbers.Real):
+        return _float(given, given, name), ""
     magnitude, units = getattr(given, "magnitude", None), getattr(given, "units", None)
     if units is None and hasattr(given, "dimensionality"):
         magnitude, units = 1.0, given
@@ -274,7 +283,14 @@ def _number_and_unit(given: object, name: str) -> tuple[float, str]:
         raise UnitError(
             name, [Problem(f"{name} = {given!r}", "text such as '12 in', or a quantity such as 12*inch", "")]
         )
-    return float(magnitude), f"{units:~C}".replace("**", "^")
+    return _float(magnitude, given, name), f"{units:~C}".replace("**", "^")
+
+
+def _float(number: Any, given: object, name: str) -> float:
+    try:
+        return float(number)
+    except (OverflowError, TypeError, ValueError) as error:
+        raise UnitError(name, [Problem(f"{name} = {given}", "one finite number", "correct the value")]) from error
 
 
 def _parse_text(text: str, name: str) -> tuple[float, str]:
@@ -317,12 +333,12 @@ def _unknown_unit(unit: str) -> UnitError:
 def _wrong_dimension(name: str, given: object, found: Dimension, wanted: Dimension, system: System) -> UnitError:
     unit = coherent_unit(wanted, system)
     examples = f"{unit} or {display_unit(wanted, system)}" if display_unit(wanted, system) != unit else unit
-    if found == RATIO and wanted.powers != RATIO.powers:
-        problem = Problem(f"{name} = {given} (no unit)", f"a {wanted.name}", f"add the unit, e.g. {examples}")
-    elif wanted.powers == RATIO.powers:
+    if found == RATIO and wanted not in (RATIO, COUNT):
+        problem = Problem(f"{name} = {given} (no unit)", wanted.phrase, f"add the unit, e.g. {examples}")
+    elif wanted in (RATIO, COUNT):
         problem = Problem(f"{name} = {given} ({found.name})", "a number without a unit", "remove the unit")
     else:
-        problem = Problem(f"{name} = {given} ({found.name})", f"a {wanted.name}", f"write it in {examples}")
+        problem = Problem(f"{name} = {given} ({found.name})", wanted.phrase, f"write it in {examples}")
     return UnitError(name, [problem])
 
 

@@ -8,7 +8,7 @@ from typing import NoReturn
 from calcpack import notebook
 from calcpack.errors import Problem, SheetError
 from calcpack.ledger import Entry, passes
-from calcpack.typeset.digits import number_text
+from calcpack.typeset.digits import stated_text
 from calcpack.typeset.line import with_unit
 from calcpack.units import Dimension, convert, display_unit
 
@@ -48,9 +48,9 @@ class Value:
 
 
 def shown_text(value: float, dimension: Dimension, unit: str = "") -> str:
-    """A coherent value as shown, in `unit` or in the display unit of its dimension."""
+    """A given, from its coherent value, as shown in `unit` or in the display unit of its dimension."""
     unit = unit or display_unit(dimension)
-    return with_unit(number_text(convert(value, unit)), unit)
+    return with_unit(stated_text(convert(value, unit)), unit)
 
 
 def ratio_text(ratio: float) -> str:

@@ -41,7 +41,7 @@ def assemble(job: Job, content: Content, open_items: Sequence[Open], state: str)
     state : ``draft``, ``preliminary`` or ``final``
     """
     newest = job.newest
-    givens = [_given(entry) for entry in content.ledger if entry.kind == "given"]
+    givens = _register(entry for entry in content.ledger if entry.kind == "given")
     return {
         "job": {name: getattr(job, name) for name in ("number", "title", "location", "client", "firm", "document")},
         "codes": {"building": job.codes.building, "concrete": job.codes.concrete, "loads": job.codes.loads},
@@ -115,9 +115,17 @@ def _names(job: Job, role: str) -> str:
     return ", ".join(person.name for person in job.acting(role))
 
 
-def _given(entry: Entry) -> dict[str, str]:
-    fields = ("id", "symbol", "means", "shown", "sheet", "source", "status")
-    return {name: str(getattr(entry, name)) for name in fields}
+def _register(entries: Iterable[Entry]) -> list[dict[str, Any]]:
+    """Givens, the same value from the same source once, with every sheet that states it."""
+    rows: dict[tuple[str, ...], dict[str, Any]] = {}
+    for entry in entries:
+        stated = {name: str(getattr(entry, name)) for name in ("symbol", "means", "shown", "source", "status")}
+        row = rows.setdefault(tuple(stated.values()), {"id": entry.id, **stated, "sheets": {}})
+        row["sheets"].setdefault(entry.sheet, entry.id)
+    return [
+        {**row, "sheet": ", ".join(row["sheets"]), "sheets": [list(item) for item in row["sheets"].items()]}
+        for row in rows.values()
+    ]
 
 
 def _ratio(ledger: Ledger, entry: Entry) -> dict[str, Any]:
@@ -173,12 +181,26 @@ def _documents(ledger: Iterable[Entry]) -> list[dict[str, Any]]:
 def _validation() -> dict[str, Any]:
     from calcpack import validation
 
-    cases = [
-        {
-            "id": case.id, "what": case.quantity, "source": case.source, "kind": case.kind, "edition": case.edition,
-            "expected": f"{case.expected:g}", "computed": f"{case.computed:.5g}",
-            "deviation": f"{case.deviation:+.2f} %", "tolerance": f"{case.tolerance:g} %", "holds": case.holds,
-        }
-        for case in validation.run()
-    ]  # fmt: skip
+    groups: dict[str, list[Any]] = {}
+    for case in validation.run():
+        groups.setdefault(case.id, []).append(case)
+    cases = [_validated(group) for group in groups.values()]
     return {"release": release(), "cases": cases}
+
+
+def _validated(group: Sequence[Any]) -> dict[str, Any]:
+    """One published case: how many of its values are checked, and the one that uses most of its tolerance."""
+    worst = max(group, key=lambda case: abs(case.deviation) / case.tolerance if case.tolerance else abs(case.deviation))
+    count = f"{len(group)} values; largest: {worst.quantity}" if len(group) > 1 else worst.quantity
+    return {
+        "id": worst.id,
+        "what": count,
+        "source": worst.source,
+        "kind": worst.kind,
+        "edition": ", ".join(dict.fromkeys(case.edition for case in group)),
+        "expected": f"{worst.expected:g}",
+        "computed": f"{worst.computed:.5g}",
+        "deviation": f"{worst.deviation:+.2f} %",
+        "tolerance": f"{worst.tolerance:g} %",
+        "holds": all(case.holds for case in group),
+    }

@@ -7,9 +7,11 @@ is put back until that sheet is done; notebooks that wait for each other are a c
 
 from __future__ import annotations
 
+import contextlib
 import hashlib
 import json
 import os
+import shutil
 import tempfile
 from collections.abc import Callable, Iterator, Sequence
 from concurrent.futures import FIRST_COMPLETED, Future, ThreadPoolExecutor, wait
@@ -96,14 +98,24 @@ class _Run:
     def __post_init__(self) -> None:
         self.paths = self.job.sheets()
         self.cache = self.job.root / ".calcpack" / "runs"
-        self.results = results_folder(self.job.root)
+        # Results of this run alone: another run of the same job at the same time must not reach them.
+        self.results = results_folder(self.job.root.absolute()).with_name(f"results.{os.getpid()}")
         self.inputs = Inputs(self.job)
         self.waiting: dict[Path, str] = {}
 
     def everything(self) -> None:
-        self.results.mkdir(parents=True, exist_ok=True)
-        for old in self.results.glob("*.json"):
-            old.unlink()
+        shutil.rmtree(self.results, ignore_errors=True)
+        self.results.mkdir(parents=True)
+        try:
+            self.work_off()
+        finally:
+            kept = results_folder(self.job.root)
+            shutil.rmtree(kept, ignore_errors=True)
+            with contextlib.suppress(OSError):
+                self.results.rename(kept)
+            shutil.rmtree(self.results, ignore_errors=True)
+
+    def work_off(self) -> None:
         todo, running = list(self.paths), dict[Future[Any], Path]()
         with ThreadPoolExecutor(_WORKERS) as pool:
             while todo or running:
@@ -113,7 +125,7 @@ class _Run:
                     if reason == _LATER:
                         todo.append(path)
                     elif reason:
-                        running[pool.submit(_execute, self.job.root, path)] = path
+                        running[pool.submit(_execute, self.results, path)] = path
                         self.progress(f"running {path.name}: {reason}")
                         self.reasons[path] = reason
                 if not running:
@@ -179,9 +191,13 @@ class _Run:
 
     def finish(self, path: Path, outcome: _Outcome) -> str:
         """Take in the outcome of a run; returns the sheet that has to run first, if any."""
-        if outcome.needs:
+        if outcome.needs and self.waiting.get(path) != outcome.needs:
             return outcome.needs
         name = f"sheets/{path.name}"
+        if outcome.needs:
+            problem = Problem(f"needs sheet {outcome.needs}", "a sheet that left its results", "run again", name)
+            self.failures.append(problem)
+            return ""
         if outcome.failure:
             self.failures.append(outcome.failure)
             self.progress(f"failed  {path.name}")
@@ -249,7 +265,7 @@ class _Outcome:
     needs: str = ""
 
 
-def _execute(root: Path, path: Path) -> _Outcome:
+def _execute(results: Path, path: Path) -> _Outcome:
     import nbformat
     from nbclient.exceptions import CellExecutionError, DeadKernelError
 
@@ -259,7 +275,7 @@ def _execute(root: Path, path: Path) -> _Outcome:
             cell.outputs, cell.execution_count = [], None
     with tempfile.TemporaryDirectory(prefix="cp") as scratch:
         opened = Path(scratch) / "opened"
-        environment = {**_environment(root, scratch), "CALCPACK_OPENED": str(opened)}
+        environment = {**_environment(results, scratch), "CALCPACK_OPENED": str(opened)}
         try:
             _client(notebook, path, Path(scratch)).execute(env=environment)
         except CellExecutionError as error:
@@ -272,11 +288,11 @@ def _execute(root: Path, path: Path) -> _Outcome:
     return _Outcome(json.loads(nbformat.writes(notebook)), files)
 
 
-def _environment(root: Path, scratch: str) -> dict[str, str]:
+def _environment(results: Path, scratch: str) -> dict[str, str]:
     # The user's own IPython and matplotlib settings must not reach a calculation, nor be written to.
     return {
         **os.environ,
-        "CALCPACK_RESULTS": str(results_folder(root)),
+        "CALCPACK_RESULTS": str(results),
         "IPYTHONDIR": f"{scratch}/ipython",
         "MPLCONFIGDIR": f"{scratch}/matplotlib",
         "PYTHONHASHSEED": "0",

@@ -10,28 +10,34 @@ import re
 from collections.abc import Callable, Sequence
 from decimal import ROUND_HALF_EVEN, Decimal
 
-__all__ = ["constant_text", "honest", "last_place", "number_text", "parse_number", "rounded"]
+__all__ = ["constant_text", "honest", "last_place", "number_text", "parse_number", "rounded", "stated_text"]
 
-_EXACT = 6  # a value of at most so many significant digits is printed whole
+_EXACT = 4  # a result of at most so many significant digits is printed whole
+_STATED = 6  # a given is printed as it was stated, up to so many
 _MOST = 13
 _SUPERSCRIPT = str.maketrans("0123456789-", "⁰¹²³⁴⁵⁶⁷⁸⁹⁻")
 _PLAIN_DIGITS = str.maketrans("⁰¹²³⁴⁵⁶⁷⁸⁹⁻", "0123456789-")
 
 
-def number_text(value: float, extra: int = 0) -> str:
-    """The value as printed, with `extra` figures beyond the usual; a short value is printed whole.
+def stated_text(value: float) -> str:
+    """A given as printed: whole, where it was stated with no more than six figures."""
+    return number_text(value, exact=_STATED)
+
+
+def number_text(value: float, extra: int = 0, exact: int = _EXACT) -> str:
+    """The value as printed, with `extra` figures beyond the usual; whole where it has no more than `exact` figures.
 
     Examples
     --------
     >>> number_text(33.0925), number_text(4000.0), number_text(1323.2417), number_text(8.4138e9)
     ('33.1', '4,000', '1,323', '8.41×10⁹')
     """
-    exact = _clean(value)
-    if exact.is_zero():
+    clean = _clean(value)
+    if clean.is_zero():
         return "0"
-    if _figures(exact) <= _EXACT and -4 <= exact.adjusted() < 8:
-        return _plain(exact)
-    return rounded(value, max(_usual(exact) + extra, exact.adjusted() + 1 if exact.adjusted() < 8 else 0))
+    if _figures(clean) <= exact and -4 <= clean.adjusted() < 8:
+        return _plain(clean)
+    return rounded(value, max(_usual(clean) + extra, clean.adjusted() + 1 if clean.adjusted() < 8 else 0))
 
 
 def constant_text(value: float) -> str:
@@ -75,7 +81,7 @@ def last_place(text: str) -> float:
 
 
 def honest(
-    evaluate: Callable[[Sequence[float]], float], values: Sequence[float], result: float
+    evaluate: Callable[[Sequence[float]], float], values: Sequence[float], result: float, first: Sequence[str] = ()
 ) -> tuple[tuple[str, ...], str]:
     """Texts for the values and the result of a line, such that the printed line gives the printed result.
 
@@ -83,6 +89,7 @@ def honest(
     ----------
     evaluate : the line as a function of its values, in the units it is printed in
     values, result : unrounded, in those units
+    first : texts to try before any others, such as those printed where the values were set
 
     Returns
     -------
@@ -91,7 +98,7 @@ def honest(
     text = number_text(result)
     tolerance = last_place(text) * (1 + 1e-9)
     for extra in range(_MOST):
-        texts = tuple(number_text(value, extra) for value in values)
+        texts = tuple(first) if first and not extra else tuple(number_text(value, extra) for value in values)
         try:
             printed = evaluate([parse_number(value) for value in texts])
         except (ArithmeticError, ValueError):

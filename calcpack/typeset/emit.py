@@ -50,6 +50,9 @@ class Target(Protocol):
     def operator(self, sign: str) -> str:
         """An operator or relation."""
 
+    def continued(self, sign: str) -> str:
+        """An operator that opens a row and belongs to the row before."""
+
     def word(self, text: str) -> str:
         """A word between conditions."""
 
@@ -91,7 +94,7 @@ def emit(node: Node, target: Target, values: bool = False) -> str:
                 joined += [target.word(word), part]
             return target.sequence(joined)
         case ("next", sign, inner):
-            return target.sequence([target.operator(sign), emit(inner, target, values)])
+            return target.sequence([target.continued(sign), emit(inner, target, values)])
     raise ValueError(f"no such node: {node[0]}")
 
 
@@ -156,6 +159,9 @@ class _Latex:
     def operator(self, sign: str) -> str:
         return {"·": r"\cdot", "−": "-", "≤": r"\leq", "≥": r"\geq", "≠": r"\neq", "juxtaposed": r"\,"}.get(sign, sign)
 
+    def continued(self, sign: str) -> str:
+        return f"{{}} {self.operator(sign)}"
+
     def word(self, text: str) -> str:
         return rf"\ \text{{{text}}}\ "
 
@@ -211,6 +217,9 @@ class _Mathml:
             return '<mo lspace="0.12em" rspace="0">&#x2062;</mo>'
         return f"<mo>{html.escape(sign)}</mo>"
 
+    def continued(self, sign: str) -> str:
+        return f'<mo form="infix">{html.escape(sign)}</mo>'
+
     def word(self, text: str) -> str:
         return f"<mspace width='0.4em'/><mtext>{text}</mtext><mspace width='0.4em'/>"
 
@@ -261,6 +270,9 @@ class _Typst:
     def operator(self, sign: str) -> str:
         return {"·": "dot.op", "−": "-", "≤": "<=", "≥": ">=", "≠": "!=", "juxtaposed": "thin"}.get(sign, sign)
 
+    def continued(self, sign: str) -> str:
+        return f'class("binary", {self.operator(sign)})'
+
     def word(self, text: str) -> str:
         return f'space "{text}" space'
 
@@ -281,13 +293,13 @@ class _Plain:
         return re.sub(r" +", " ", " ".join(parts))
 
     def fraction(self, above: str, below: str) -> str:
-        return f"{_grouped(above)}/{_grouped(below, '/')}"
+        return f"{_grouped(above, '−')}/{_grouped(below, '/−')}"
 
     def root(self, inner: str) -> str:
         return f"√{_grouped(inner, '/^')}"
 
     def power(self, base: str, exponent: str) -> str:
-        return f"{base}^{_grouped(exponent, '/')}"
+        return f"{base}^{_grouped(exponent, '/−')}"
 
     def bracket(self, inner: str) -> str:
         return f"({inner})"
@@ -297,6 +309,9 @@ class _Plain:
 
     def operator(self, sign: str) -> str:
         return "" if sign == "juxtaposed" else sign
+
+    def continued(self, sign: str) -> str:
+        return self.operator(sign)
 
     def word(self, text: str) -> str:
         return text

@@ -11,7 +11,7 @@ from typing import Any
 from calcpack import expression
 from calcpack.formula import Formula, Recorded, Recording
 from calcpack.formula_source import UNIT_CONSTANTS, Line, opposite, without_units
-from calcpack.typeset.digits import constant_text, honest, number_text
+from calcpack.typeset.digits import constant_text, honest, number_text, stated_text
 from calcpack.typeset.layout import Layout
 from calcpack.typeset.rows import Printed
 from calcpack.typeset.store import FormulaLayout
@@ -137,8 +137,8 @@ def _print(recorded: Recorded, layouts: FormulaLayout, scope: _Scope) -> Printed
     names = tuple(dict.fromkeys([*line.names, *condition_names]))
     system = system_of(scope.formula, names, line, scope, tests)
     scaled = [convert(scope.values[name], coherent_unit(scope.dimensions[name], system)) for name in names]
-    unit = coherent_unit(line.dimension, system)
-    result = convert(recorded.value, unit)
+    line_unit = coherent_unit(line.dimension, system)
+    result = convert(recorded.value, line_unit)
 
     def evaluate(values: Sequence[float]) -> float:
         given = dict(zip(names, values, strict=True))
@@ -147,19 +147,27 @@ def _print(recorded: Recorded, layouts: FormulaLayout, scope: _Scope) -> Printed
                 raise ValueError("printed with so few figures, the condition does not hold")
         return float(eval(line.code, scope.formula.function.__globals__, given))
 
-    texts, text = honest(evaluate, scaled, result)
+    units = [coherent_unit(scope.dimensions[name], system) for name in names]
+    first = [_as_set(scope.shown[name], value, unit) for name, value, unit in zip(names, scaled, units, strict=True)]
+    texts, text = honest(evaluate, scaled, result, first)
     fills = {
-        name: Printed(with_unit(text, coherent_unit(scope.dimensions[name], system)), *_link(scope.origins[name]))
-        for name, text in zip(names, texts, strict=True)
+        name: Printed(with_unit(text, unit), *_link(scope.origins[name]))
+        for name, text, unit in zip(names, texts, units, strict=True)
     }
     conditions = tuple(
         (layout, _fill(layout, fills)) for layout in (layouts.conditions[ast.unparse(test)] for test in tests)
     )
     layout = layouts.lines[line.index]
-    line_result = with_unit(text, unit)
+    line_result = with_unit(text, line_unit)
     return PrintedLine(
         line.target, layout, _fill(layout, fills), conditions, line_result, _shown(recorded, system, line_result)
     )
+
+
+def _as_set(shown: str, value: float, unit: str) -> str:
+    """The number as it is printed where it was set, if it stands there in the same unit."""
+    number, _, shown_unit = shown.partition(" ")
+    return number if shown_unit == plain_unit(unit) and _PRINTED.fullmatch(number) else stated_text(value)
 
 
 def _plain(test: ast.expr) -> str:
@@ -209,7 +217,7 @@ def system_of(
     if formula.empirical or constants & {"psi", "lb"}:
         return US
     dimensions = [*(scope.dimensions[name] for name in names), line.dimension]
-    forces = any(dimension.force and dimension.length != -2 for dimension in dimensions)
+    forces = any(dimension.force and dimension.length >= -1 for dimension in dimensions)
     feet = sum(bool(_FEET.search(scope.shown[name])) for name in names)
     inches = sum(bool(_INCHES.search(scope.shown[name])) for name in names)
     if feet > inches and not constants:
@@ -217,5 +225,6 @@ def system_of(
     return US_KIP if forces else US
 
 
+_PRINTED = re.compile(r"−?[0-9,]{1,10}(\.[0-9]{1,6})?")
 _FEET = re.compile(r"\bft|psf|ksf|pcf|kcf|plf|klf")
 _INCHES = re.compile(r"\bin|psi|ksi|pci")

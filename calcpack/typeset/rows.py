@@ -136,7 +136,9 @@ def broken(node: Node, limit: float) -> list[Node]:
             sign = "+" if terms[0][0] == "+" else "−"
             rest = (("+", terms[0][1]), *terms[1:])
             body = ("add", rest) if len(rest) > 1 else rest[0][1]
-            rows.append(("next", sign, body) if rows else (("add", tuple(terms)) if len(terms) > 1 else terms[0][1]))
+            rows.append(
+                ("next", sign, body) if rows else (("add", tuple(terms)) if len(terms) > 1 or sign != "+" else body)
+            )
         return rows
     for factors in _packed([(factor, width(factor) + 0.8) for factor in node[1]], limit):
         body = ("mul", tuple(factors)) if len(factors) > 1 else factors[0]
