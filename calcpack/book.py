@@ -57,7 +57,8 @@ class SheetBook:
         stale = {entry.id for entry in self._cells.pop(key)[1]}
         stale |= {user for identifier in stale for user in self.ledger.above(identifier)}
         kept = [entry for entry in self.ledger if entry.id not in stale]
-        self._values = {entry.id: self._values[entry.id] for entry in kept}
+        here = {entry.id for entry in kept}
+        self._values = {key: value for key, value in self._values.items() if key in here or value.sheet != self.id}
         renewed = Ledger()
         renewed.admit_all(self.ledger)
         for entry in kept:

@@ -8,6 +8,7 @@ from __future__ import annotations
 
 import argparse
 import json
+import os
 import sys
 from collections.abc import Callable, Sequence
 from pathlib import Path
@@ -31,15 +32,18 @@ def main(arguments: Sequence[str] | None = None) -> int:
             stream.reconfigure(encoding="utf-8", errors="replace")
     options = _parser().parse_args(arguments)
     try:
-        return int(options.run(options))
+        status = int(options.run(options))
+        sys.stdout.flush()
+        return status
     except CalcpackError as error:
         print(f"{type(error).__name__}: {error}", file=sys.stderr)
     except KeyboardInterrupt:
         print("stopped; nothing was written", file=sys.stderr)
     except BrokenPipeError:
-        sys.stderr.close()
+        # Whoever read has left; what is still in the buffer must not be tried again when Python ends.
+        sys.stdout = open(os.devnull, "w", encoding="utf-8")  # noqa: SIM115, PTH123
     except OSError as error:
-        print(f"cannot read or write {error.filename}: {error.strerror}", file=sys.stderr)
+        print(f"cannot read or write {error.filename or 'a file'}: {error.strerror or error}", file=sys.stderr)
     return REFUSED
 
 

@@ -7,7 +7,7 @@ from dataclasses import dataclass
 from pathlib import Path
 from typing import TYPE_CHECKING, Any
 
-from calcpack import symbols
+from calcpack import notebook, symbols
 from calcpack.book import SheetBook
 from calcpack.errors import Problem, SheetError
 from calcpack.formula import Formula
@@ -47,23 +47,15 @@ class Scheduled(SheetBook):
         RangeError : everything that is wrong with the row, at once
         """
         from calcpack.job import read_terminations
-        from calcpack.members.anchorage import required_length
-        from calcpack.members.termination import place
+        from calcpack.members.anchorage import work_termination
 
-        row = self._row("anchorage", mark, read_terminations(self._root))
+        with notebook.reading_inputs():
+            rows = read_terminations(self._root)
+        row = self._row("anchorage", mark, rows)
         where = f", {row.location}" if row.location else ""
         self._head("anchorage", [row], f"{row.mark}: {row.kind}, #{row.bar} bar{where}")
-        pad = SheetPad(self)
-        required = required_length(pad, row, self.code)
-        if row.available is not None:
-            available = pad.given("l_available", row.available, "length the detail offers", place(row))
-            pad.verify(
-                f"{row.mark}: {row.kind} of #{row.bar} within the length available",
-                required.value,
-                available,
-                required.clause,
-            )
-        return required.value
+        required, _ = work_termination(SheetPad(self), row, self.code)
+        return required
 
     def column(self, mark: str) -> None:
         """Work and verify every check of a column of the schedule.
@@ -76,8 +68,10 @@ class Scheduled(SheetBook):
         from calcpack.job import read_columns, read_forces
         from calcpack.members.column import work_column
 
-        row = self._row("columns", mark, read_columns(self._root))
-        forces = [force for force in read_forces(self._root) if force.mark == mark]
+        with notebook.reading_inputs():
+            rows, listed = read_columns(self._root), read_forces(self._root)
+        row = self._row("columns", mark, rows)
+        forces = [force for force in listed if force.mark == mark]
         self._head("columns", [row], f"{row.mark}: {row.shape} column", [(f"forces {mark}", forces)])
         work_column(SheetPad(self), row, forces, self.code)
 
@@ -130,3 +124,7 @@ class SheetPad:
     def verify(self, what: str, demand: Value, capacity: Value, clause: str) -> float:
         """A verdict of the sheet."""
         return float(self.sheet.verify(what, demand=demand, capacity=capacity, clause=clause))
+
+    def heading(self, text: str) -> None:
+        """A heading of the sheet."""
+        self.sheet.heading(text)

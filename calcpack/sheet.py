@@ -17,7 +17,7 @@ from calcpack.errors import InputError, Problem, SheetError
 from calcpack.formula import Clause, Formula
 from calcpack.ledger import Entry, passes
 from calcpack.scheduled import Scheduled
-from calcpack.typeset.line import Origin, printed_lines
+from calcpack.typeset.line import Origin, printed_lines, with_unit
 from calcpack.typeset.store import LayoutStore
 from calcpack.units import RATIO, Measured, coherent_unit, read
 from calcpack.value import Value, ratio_text, shown_text
@@ -204,6 +204,7 @@ class Sheet(Scheduled):
         value, digest = carried(self._root, sheet, name, self._place())
         self.ledger.admit(value.entry.id, digest)
         entry = value.entry
+        self._values[entry.id] = value
         self._show(
             "given", reads=[[f"sheet {sheet} {entry.id}", digest]], id="", symbol=entry.symbol, means=entry.means,
             shown=entry.shown, source=f"sheet {sheet}", status="confirmed", link=entry.id,
@@ -226,7 +227,7 @@ class Sheet(Scheduled):
             raise SheetError("solved value", [problem], self._place())
         self._begin()
         measured = read(value, symbols.lookup(symbol).dimension if symbols.is_known(symbol) else None, symbol)
-        identifier, shown = self._free_ids([symbol])[0], shown_text(measured.value, measured.dimension, "")
+        identifier, shown = self._free_ids([symbol])[0], shown_text(measured.value, measured.dimension)
         entry = Entry(
             identifier, "solved", symbol, means, measured.value, coherent_unit(measured.dimension), shown, self.id,
             clause=clause, method=method, confirmed_by=tuple(item.entry.id for item in confirmed_by),
@@ -243,7 +244,8 @@ class Sheet(Scheduled):
     def _listed(self, symbol: str) -> Value:
         from calcpack.job import row_digest
 
-        rows = {row.symbol: row for row in self._job.givens}
+        with notebook.reading_inputs():
+            rows = {row.symbol: row for row in self._job.givens}
         if symbol not in rows:
             allowed = f"one of inputs/givens.toml ({', '.join(rows) or 'which lists none'})"
             remedy = "list it there, or write value, means and source here"
@@ -264,7 +266,10 @@ class Sheet(Scheduled):
         reads: Sequence[Any] = (),
     ) -> Value:
         self._begin()
+        written = measured.written if unit in ("", measured.unit) else ""
         shown = shown_text(measured.value, measured.dimension, unit or measured.unit)
+        if written:
+            shown = with_unit(written, measured.unit)
         identifier = self._free_ids([symbol])[0]
         entry = Entry(
             identifier, "given", symbol, means, measured.value, coherent_unit(measured.dimension), shown, self.id,

@@ -75,11 +75,14 @@ _ROWS: tuple[tuple[str, str, Dimension, str, str], ...] = (
     ("n_face", "n_{face}", COUNT, "number of bars along a face, corners included", "positive"),
     ("s", "s", LENGTH, "centre-to-centre spacing", "positive"),
     ("s_max", "s_{max}", LENGTH, "largest spacing allowed", "positive"),
+    ("s_min", "s_{min}", LENGTH, "least spacing, centre to centre", "positive"),
     ("s_clear", "s_{clear}", LENGTH, "clear spacing", "positive"),
     ("s_clear_min", "s_{clear,min}", LENGTH, "least clear spacing allowed", "positive"),
     ("s_clear_max", "s_{clear,max}", LENGTH, "largest clear spacing allowed", "positive"),
     ("c_c", "c_c", LENGTH, "clear cover of reinforcement", "positive"),
+    ("c_c_min", "c_{c,min}", LENGTH, "least clear cover", "positive"),
     ("c_b", "c_b", LENGTH, "least of cover to bar centre and half the bar spacing", "positive"),
+    ("c_b_max", "c_{b,max}", LENGTH, "largest c_b that the stated cover or spacing gives", "positive"),
     ("c_side", "c_{side}", LENGTH, "side cover normal to the plane of the hook", "positive"),
     ("c_tail", "c_{tail}", LENGTH, "cover on the bar extension beyond the hook", "positive"),
     ("d_agg", "d_{agg}", LENGTH, "nominal maximum size of coarse aggregate", "positive"),
@@ -128,6 +131,7 @@ _ROWS: tuple[tuple[str, str, Dimension, str, str], ...] = (
     ("l_available", r"\ell_{available}", LENGTH, "length the detail offers", "positive"),
     ("D_bend", r"D_{bend}", LENGTH, "least inside diameter of bend", "positive"),
     ("K_tr", "K_{tr}", LENGTH, "transverse reinforcement index", "nonnegative"),
+    ("K_tr_min", "K_{tr,min}", LENGTH, "least transverse reinforcement index", "positive"),
     ("confinement", r"\frac{c_b + K_{tr}}{d_b}", RATIO, "confinement term", "positive"),
     ("psi_t", r"\psi_t", RATIO, "factor for casting position", "positive"),
     ("psi_e", r"\psi_e", RATIO, "factor for reinforcement coating", "positive"),
@@ -227,7 +231,8 @@ def typeset_name(name: str) -> str:
     if name in NOTATION:
         return NOTATION[name].latex
     base, *subscripts = re.sub(r"(?<=\D)_?(\d+)$", r"_\1", name).split("_") if name[-1].isdigit() else name.split("_")
-    head = _letter(base)
+    # A length l is set as in the code book, where a plain l reads as a one.
+    head = r"\ell" if base == "l" else _letter(base)
     if base in ("phi", "Phi") and len(subscripts) >= 2 and len(subscripts[0]) == 1 and subscripts[0].isupper():
         return rf"{head} {typeset_name('_'.join(subscripts))}"
     return f"{head}_{{{','.join(_letter(part) for part in subscripts if part)}}}" if any(subscripts) else head

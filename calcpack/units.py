@@ -9,7 +9,7 @@ from __future__ import annotations
 import math
 import numbers
 import re
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 from functools import cache
 from importlib import resources
 from typing import TYPE_CHECKING, Annotated, Any
@@ -145,12 +145,14 @@ class Measured:
     dimension : what it measures
     unit : the unit it was written in
     number : the number as written, in `unit`
+    written : its digits as written, empty where it came as a quantity, a fraction or in feet and inches
     """
 
     value: float
     dimension: Dimension
     unit: str
     number: float
+    written: str = field(default="", compare=False)
 
 
 @cache
@@ -263,10 +265,15 @@ def read(given: object, dimension: Dimension | None, name: str = "value", system
         raise UnitError(name, [Problem(f"{name} = {given}", "a finite number", "correct the value")])
     found = dimension_of(unit) if unit else RATIO
     if dimension is None:
-        return Measured(number * factor(unit, system), found, unit, number)
+        return Measured(number * factor(unit, system), found, unit, number, _written(given))
     if found.powers != dimension.powers or (found == ANGLE) != (dimension == ANGLE):
         raise _wrong_dimension(name, given, found, dimension, system)
-    return Measured(number * (factor(unit, system) if unit else 1.0), dimension, unit, number)
+    return Measured(number * (factor(unit, system) if unit else 1.0), dimension, unit, number, _written(given))
+
+
+def _written(given: object) -> str:
+    match = re.match(r"\s*(-?)([0-9][0-9,]*)(\.[0-9]+)?(?=\s|$)", given) if isinstance(given, str) else None
+    return f"{'−' if match[1] else ''}{int(match[2].replace(',', '')):,}{match[3] or ''}" if match else ""
 
 
 def _number_and_unit(given: object, name: str) -> tuple[float, str]:

@@ -24,7 +24,7 @@ class Value:
     sheet: str
 
     def __float__(self) -> float:
-        return self.entry.value
+        return float(self.entry.value)
 
     def __str__(self) -> str:
         return f"{self.entry.symbol} = {self.entry.shown}"

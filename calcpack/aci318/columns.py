@@ -18,13 +18,19 @@ __all__ = [
     "axial_strength_maximum_spiral",
     "axial_strength_maximum_tied",
     "bar_circle",
+    "bar_pitch_circular",
+    "bar_pitch_face",
+    "bar_pitch_side",
     "bar_spacing_circular",
     "bar_spacing_face",
     "bar_spacing_minimum",
     "bar_spacing_minimum_aggregate",
+    "bar_spacing_side",
     "bars_minimum_spiral",
     "bars_minimum_tied",
     "design_axial_strength",
+    "least_dimension_circular",
+    "least_dimension_rectangular",
     "phi_spiral",
     "phi_tied",
     "reinforcement_ratio",
@@ -56,6 +62,20 @@ def area_circular(*, h: Length) -> Area:
     """Gross area of a circular section."""
     A_g = pi / 4 * h**2
     return A_g
+
+
+@formula(_GEOMETRY)
+def least_dimension_rectangular(*, b: Length, h: Length) -> Length:
+    """Least dimension of a rectangular column."""
+    h_min = min(b, h)
+    return h_min
+
+
+@formula(_GEOMETRY)
+def least_dimension_circular(*, h: Length) -> Length:
+    """Least dimension of a circular column."""
+    h_min = h
+    return h_min
 
 
 @formula(_GEOMETRY)
@@ -149,14 +169,14 @@ def reinforcement_ratio_maximum() -> Ratio:
 @formula(*_BARS)
 def bars_minimum_tied() -> Count:
     """Least number of bars within rectangular or circular ties."""
-    n_min = 4
+    n_min = 4.0
     return n_min
 
 
 @formula(*_BARS)
 def bars_minimum_spiral() -> Count:
     """Least number of bars within a spiral."""
-    n_min = 6
+    n_min = 6.0
     return n_min
 
 
@@ -165,6 +185,27 @@ def bar_spacing_face(*, b: Length, c_cover: Length, d_bt: Length, n_face: Count,
     """Clear spacing of bars along a face of width b."""
     s_clear = (b - 2 * (c_cover + d_bt) - n_face * d_b) / (n_face - 1)
     return s_clear
+
+
+@formula(_GEOMETRY)
+def bar_spacing_side(*, h: Length, c_cover: Length, d_bt: Length, n_face: Count, d_b: Length) -> Length:
+    """Clear spacing of bars along a face of depth h."""
+    s_clear = (h - 2 * (c_cover + d_bt) - n_face * d_b) / (n_face - 1)
+    return s_clear
+
+
+@formula(_GEOMETRY)
+def bar_pitch_face(*, b: Length, c_cover: Length, d_bt: Length, n_face: Count, d_b: Length) -> Length:
+    """Centre-to-centre spacing of bars along a face of width b."""
+    s = (b - 2 * (c_cover + d_bt) - d_b) / (n_face - 1)
+    return s
+
+
+@formula(_GEOMETRY)
+def bar_pitch_side(*, h: Length, c_cover: Length, d_bt: Length, n_face: Count, d_b: Length) -> Length:
+    """Centre-to-centre spacing of bars along a face of depth h."""
+    s = (h - 2 * (c_cover + d_bt) - d_b) / (n_face - 1)
+    return s
 
 
 @formula(_GEOMETRY)
@@ -179,6 +220,13 @@ def bar_spacing_circular(*, D_s: Length, n_bars: Count, d_b: Length) -> Length:
     """Clear spacing of bars on a circle, along the chord."""
     s_clear = D_s * sin(pi / n_bars) - d_b
     return s_clear
+
+
+@formula(_GEOMETRY)
+def bar_pitch_circular(*, D_s: Length, n_bars: Count) -> Length:
+    """Centre-to-centre spacing of bars on a circle, along the chord."""
+    s = D_s * sin(pi / n_bars)
+    return s
 
 
 @formula(*_SPACING)

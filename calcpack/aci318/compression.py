@@ -12,6 +12,7 @@ from calcpack.units import Area, Length, Ratio, Stress
 __all__ = ["compression", "compression_minimum", "compression_reduced"]
 
 
+# Both expressions of the clause end in psi_r d_b; taken out, the line breaks where the column is full.
 @formula(
     ACI_318_14("25.4.9.2"),
     ACI_318_19("25.4.9.2"),
@@ -20,8 +21,8 @@ __all__ = ["compression", "compression_minimum", "compression_reduced"]
 )
 def compression(*, f_y: Stress, f_c: Stress, lamb: Ratio, psi_r: Ratio, d_b: Length) -> Length:
     """Development length in compression by the equations, before the minimum."""
-    root_f_c = min(sqrt(f_c), 100)
-    l_dc_a = max(f_y * psi_r / (50 * lamb * root_f_c) * d_b, 0.0003 * f_y * psi_r * d_b)
+    root_f_c = min(sqrt(f_c), 100.0)
+    l_dc_a = max(f_y / (50 * lamb * root_f_c), 0.0003 * f_y) * psi_r * d_b
     return l_dc_a
 
 

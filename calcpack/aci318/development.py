@@ -9,10 +9,14 @@ from math import sqrt
 
 from calcpack.aci318.limits import BAR_DIAMETER, CONCRETE, LIGHTWEIGHT, YIELD_80, YIELD_100, YIELD_LEAST
 from calcpack.aci318.standards import ACI_318_14, ACI_318_19
-from calcpack.formula import formula, inch
+from calcpack.formula import Clause, formula, inch
 from calcpack.units import Area, Count, Length, Ratio, Stress
 
 __all__ = [
+    "c_b_by_cover",
+    "c_b_by_spacing",
+    "centre_spacing",
+    "close_bars",
     "cover_or_spacing",
     "straight_tension_14",
     "straight_tension_19",
@@ -23,6 +27,7 @@ __all__ = [
     "straight_tension_spaced_14",
     "straight_tension_spaced_19",
     "transverse_index",
+    "transverse_index_minimum",
 ]
 
 _LIMITS_14 = (CONCRETE, YIELD_LEAST, YIELD_80, LIGHTWEIGHT, BAR_DIAMETER)
@@ -37,6 +42,28 @@ def cover_or_spacing(*, c_c: Length, s_clear: Length, d_b: Length) -> Length:
     return c_b
 
 
+@formula(Clause("geometry of the section"))
+def centre_spacing(*, s_clear: Length, d_b: Length) -> Length:
+    """Centre-to-centre spacing of bars, from their clear spacing."""
+    s = s_clear + d_b
+    return s
+
+
+# One per cent above the definition, for dimensions rounded on the drawing.
+@formula(ACI_318_14("2.2"), ACI_318_19("2.2"))
+def c_b_by_cover(*, c_c: Length, d_b: Length) -> Length:
+    """Largest c_b within the clear cover, with one per cent for rounded dimensions."""
+    c_b_max = 1.01 * (c_c + d_b / 2)
+    return c_b_max
+
+
+@formula(ACI_318_14("2.2"), ACI_318_19("2.2"))
+def c_b_by_spacing(*, s: Length) -> Length:
+    """Largest c_b within half the bar spacing, with one per cent for rounded dimensions."""
+    c_b_max = 1.01 * s / 2
+    return c_b_max
+
+
 # n counts the bars being developed or spliced along the plane of splitting, not every bar of the section.
 @formula(ACI_318_14("25.4.2.3b"), ACI_318_19("25.4.2.4b"))
 def transverse_index(*, A_tr: Area, s: Length, n: Count) -> Length:
@@ -47,6 +74,20 @@ def transverse_index(*, A_tr: Area, s: Length, n: Count) -> Length:
     """
     K_tr = 40 * A_tr / (s * n)
     return K_tr
+
+
+@formula(ACI_318_19("25.4.2.2"))
+def close_bars() -> Length:
+    """Spacing below which bars of Grade 80 and above need transverse reinforcement."""
+    s_min = 6 * inch
+    return s_min
+
+
+@formula(ACI_318_19("25.4.2.2"))
+def transverse_index_minimum(*, d_b: Length) -> Length:
+    """Least transverse reinforcement index of close bars of Grade 80 and above."""
+    K_tr_min = 0.5 * d_b
+    return K_tr_min
 
 
 @formula(ACI_318_14("25.4.2.3a"), empirical=True, limits=_LIMITS_14)
@@ -65,7 +106,7 @@ def straight_tension_14(
     """Development length in tension by the general equation, before the minimum."""
     psi_te = min(psi_t * psi_e, 1.7)
     confinement = min((c_b + K_tr) / d_b, 2.5)
-    root_f_c = min(sqrt(f_c), 100)
+    root_f_c = min(sqrt(f_c), 100.0)
     l_d_a = 3 / 40 * f_y / (lamb * root_f_c) * psi_te * psi_s / confinement * d_b
     return l_d_a
 
@@ -87,7 +128,7 @@ def straight_tension_19(
     """Development length in tension by the general equation, before the minimum."""
     psi_te = min(psi_t * psi_e, 1.7)
     confinement = min((c_b + K_tr) / d_b, 2.5)
-    root_f_c = min(sqrt(f_c), 100)
+    root_f_c = min(sqrt(f_c), 100.0)
     l_d_a = 3 / 40 * f_y / (lamb * root_f_c) * psi_te * psi_s * psi_g / confinement * d_b
     return l_d_a
 
@@ -98,7 +139,7 @@ def straight_tension_spaced_14(
 ) -> Length:
     """Development length in tension by the table, cover and spacing conditions met, before the minimum."""
     psi_te = min(psi_t * psi_e, 1.7)
-    root_f_c = min(sqrt(f_c), 100)
+    root_f_c = min(sqrt(f_c), 100.0)
     if d_b <= 0.75 * inch:
         l_d_a = f_y * psi_te / (25 * lamb * root_f_c) * d_b
     else:
@@ -112,7 +153,7 @@ def straight_tension_other_14(
 ) -> Length:
     """Development length in tension by the table, other cases, before the minimum."""
     psi_te = min(psi_t * psi_e, 1.7)
-    root_f_c = min(sqrt(f_c), 100)
+    root_f_c = min(sqrt(f_c), 100.0)
     if d_b <= 0.75 * inch:
         l_d_a = 3 * f_y * psi_te / (50 * lamb * root_f_c) * d_b
     else:
@@ -126,7 +167,7 @@ def straight_tension_spaced_19(
 ) -> Length:
     """Development length in tension by the table, cover and spacing conditions met, before the minimum."""
     psi_te = min(psi_t * psi_e, 1.7)
-    root_f_c = min(sqrt(f_c), 100)
+    root_f_c = min(sqrt(f_c), 100.0)
     if d_b <= 0.75 * inch:
         l_d_a = f_y * psi_te * psi_g / (25 * lamb * root_f_c) * d_b
     else:
@@ -140,7 +181,7 @@ def straight_tension_other_19(
 ) -> Length:
     """Development length in tension by the table, other cases, before the minimum."""
     psi_te = min(psi_t * psi_e, 1.7)
-    root_f_c = min(sqrt(f_c), 100)
+    root_f_c = min(sqrt(f_c), 100.0)
     if d_b <= 0.75 * inch:
         l_d_a = 3 * f_y * psi_te * psi_g / (50 * lamb * root_f_c) * d_b
     else:

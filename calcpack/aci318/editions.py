@@ -25,7 +25,7 @@ class Edition:
     grade_factor : rule of psi_g, or None
     hook_reduced : a hook's length reduced for excess reinforcement, or None where that is not permitted
     hook_by_cover : psi_c of hooks goes by cover and psi_r by ties at 3 d_b, else psi_c by strength and psi_r by A_th
-    head_spacing : least centre-to-centre spacing of headed bars in bar diameters, 25.4.4.1
+    head_spacing : least centre-to-centre spacing of headed bars
     close_bars_need_ties : whether bars of Grade 80 and above, closer than 6 in, need K_tr of 0.5 d_b
     """
 
@@ -42,7 +42,7 @@ class Edition:
     hook_reduced: Formula | None
     hook_by_cover: bool
     head: Formula
-    head_spacing: float
+    head_spacing: Formula
 
     @property
     def name(self) -> str:
@@ -67,7 +67,7 @@ EDITIONS: dict[str, Edition] = {
             hook_reduced=hooks.hook_reduced,
             hook_by_cover=True,
             head=heads.head_14,
-            head_spacing=5.0,
+            head_spacing=heads.head_spacing_14,
         ),
         Edition(
             standard=ACI_318_19,
@@ -83,7 +83,7 @@ EDITIONS: dict[str, Edition] = {
             hook_reduced=None,
             hook_by_cover=False,
             head=heads.head_19,
-            head_spacing=3.0,
+            head_spacing=heads.head_spacing_19,
         ),
     )
 }

@@ -124,7 +124,7 @@ def coated_bar_by_c_b(*, c_b: Length, d_b: Length) -> Ratio:
 
 @formula(_HOOK_14, _HOOK_19)
 def coated_hook() -> Ratio:
-    """Coating factor of hooked bars with epoxy or dual coating."""
+    """Coating factor of hooked or headed bars with epoxy or dual coating."""
     psi_e = 1.2
     return psi_e
 
@@ -239,7 +239,7 @@ def unconfined() -> Ratio:
 
 @formula(_HOOK_19)
 def location_in_core(*, d_b: Length, c_side: Length) -> Ratio:
-    """Location factor of a hook that ends inside a column core."""
+    """Location factor of a hook or head that ends inside a column core."""
     if d_b <= 1.41 * inch and c_side >= min(2.5 * inch, 6 * d_b):
         psi_o = 1.0
     else:
@@ -249,7 +249,7 @@ def location_in_core(*, d_b: Length, c_side: Length) -> Ratio:
 
 @formula(_HOOK_19)
 def location_outside_core(*, d_b: Length, c_side: Length) -> Ratio:
-    """Location factor of a hook outside a column core."""
+    """Location factor of a hook or head outside a column core."""
     if d_b <= 1.41 * inch and c_side >= 6 * d_b:
         psi_o = 1.0
     else:
@@ -259,14 +259,14 @@ def location_outside_core(*, d_b: Length, c_side: Length) -> Ratio:
 
 @formula(_HOOK_19)
 def location_unknown() -> Ratio:
-    """Location factor of a hook whose side cover is not stated."""
+    """Location factor of a hook or head whose side cover is not stated."""
     psi_o = 1.25
     return psi_o
 
 
 @formula(_HOOK_19)
 def concrete_strength(*, f_c: Stress) -> Ratio:
-    """Strength factor of hooks.
+    """Strength factor of hooks and heads.
 
     >>> round(concrete_strength(f_c=4_000.0), 4), concrete_strength(f_c=6_000.0)
     (0.8667, 1.0)

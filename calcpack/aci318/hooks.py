@@ -46,7 +46,7 @@ _TIE_BAR = Limit("d_b", "No. 8 and smaller, ACI 318 Table 25.3.2", values=(0.375
 )
 def hook_14(*, f_y: Stress, f_c: Stress, lamb: Ratio, psi_e: Ratio, psi_c: Ratio, psi_r: Ratio, d_b: Length) -> Length:
     """Development length of a standard hook by the equation, before its minima."""
-    root_f_c = min(sqrt(f_c), 100)
+    root_f_c = min(sqrt(f_c), 100.0)
     l_dh_a = f_y * psi_e * psi_c * psi_r / (50 * lamb * root_f_c) * d_b
     return l_dh_a
 
@@ -60,7 +60,7 @@ def hook_19(
     *, f_y: Stress, f_c: Stress, lamb: Ratio, psi_e: Ratio, psi_r: Ratio, psi_o: Ratio, psi_c: Ratio, d_b: Length
 ) -> Length:
     """Development length of a standard hook by the equation, before its minima."""
-    root_f_c = min(sqrt(f_c), 100)
+    root_f_c = min(sqrt(f_c), 100.0)
     l_dh_a: Length = f_y * psi_e * psi_r * psi_o * psi_c / (55 * lamb * root_f_c) * d_b**1.5
     return l_dh_a
 
@@ -87,7 +87,7 @@ def hook_reduced(*, l_dh_a: Length, A_s_required: Area, A_s_provided: Area, d_b:
 )
 def hook_special_frame(*, f_y: Stress, f_c: Stress, lamb: Ratio, d_b: Length) -> Length:
     """Development length of a 90-degree hook inside the confined core of a special moment frame joint."""
-    root_f_c = min(sqrt(f_c), 100)
+    root_f_c = min(sqrt(f_c), 100.0)
     l_dh = max(f_y * d_b / (65 * lamb * root_f_c), 8 * d_b, 6 * inch)
     return l_dh
 

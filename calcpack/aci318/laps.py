@@ -6,6 +6,8 @@ excess reinforcement.
 
 from __future__ import annotations
 
+from calcpack.aci318 import development
+from calcpack.aci318.factors import cited_in
 from calcpack.aci318.limits import BAR_DIAMETER_TO_NO_11, CONCRETE, YIELD_80, YIELD_100, YIELD_LEAST
 from calcpack.aci318.standards import ACI_318_14, ACI_318_19
 from calcpack.formula import formula, inch, psi
@@ -14,10 +16,12 @@ from calcpack.units import Length, Stress
 __all__ = [
     "lap_class_a",
     "lap_class_b",
+    "lap_close_bars",
     "lap_compression",
     "lap_compression_high_grade",
     "lap_in_spiral",
     "lap_in_ties",
+    "lap_transverse_index_minimum",
     "lap_without_reduction",
 ]
 
@@ -91,3 +95,7 @@ def lap_in_spiral(*, l_sc_a: Length) -> Length:
     """Compression lap inside a column spiral, not less than 12 in."""
     l_sc = max(0.75 * l_sc_a, 12 * inch)
     return l_sc
+
+
+lap_close_bars = cited_in(development.close_bars, ACI_318_19("25.5.1.5"))
+lap_transverse_index_minimum = cited_in(development.transverse_index_minimum, ACI_318_19("25.5.1.5"))

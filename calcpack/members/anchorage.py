@@ -6,13 +6,14 @@ schedule or worked by its own rule. Which rule serves an argument depends on the
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Iterator, Mapping
+from collections.abc import Iterable, Mapping
 from dataclasses import dataclass
 from typing import Generic, TypeVar
 
 from calcpack.aci318.bars import bar
 from calcpack.aci318.editions import Edition
 from calcpack.errors import InputError, RangeError
+from calcpack.members.anchorage_conditions import requirements
 from calcpack.members.anchorage_rules import (
     COMPRESSION_LAP_RULES,
     COMPRESSION_RULES,
@@ -20,46 +21,59 @@ from calcpack.members.anchorage_rules import (
     HOOK_RULES,
     LAP_RULES,
     STRAIGHT_RULES,
-    Choice,
     Rule,
 )
 from calcpack.members.pad import FloatPad, Pad
-from calcpack.members.results import CheckResult, measured, verdict_of
+from calcpack.members.results import CheckResult, Requirement, measured, verdict_of
+from calcpack.members.sources import NOMINAL
 from calcpack.members.termination import TerminationLike, place
-from calcpack.members.termination_problems import refuse_problems, requirements
+from calcpack.members.termination_problems import refuse_problems
+from calcpack.members.working import Choice, Stated, Working
 from calcpack.symbols import lookup
 
-__all__ = ["Required", "check", "check_all", "required_length"]
+__all__ = ["Required", "check", "check_all", "required_length", "work_termination"]
 
 T = TypeVar("T")
 
 
 @dataclass(frozen=True)
 class Required(Generic[T]):
-    """A required length: its symbol, its value, and the clause of the equation it comes from."""
+    """A required length: its symbol, its value, the clause of its equation, and what is asked beside it.
+
+    Attributes
+    ----------
+    requirements : conditions of the provision that the row decides, or leaves to a condition
+    notes : what a reader has to know beside the numbers
+    """
 
     symbol: str
     value: T
     clause: str
+    requirements: tuple[Requirement, ...] = ()
+    notes: tuple[str, ...] = ()
 
 
 @dataclass(frozen=True)
 class _Kind:
-    """The symbol a kind of anchorage asks for, the symbol whose equation it cites, and the rules of its arguments."""
+    """The symbol a kind of anchorage asks for, the symbol whose equation it cites, the rules of its arguments.
+
+    `words` say what has to fit the detail, with the size of the bar in place.
+    """
 
     symbol: str
     cited: str
     rules: Mapping[str, Rule]
+    words: str
 
 
 _KINDS = {
-    "straight tension": _Kind("l_d", "l_d_a", STRAIGHT_RULES),
-    "hook 90": _Kind("l_dh", "l_dh_a", HOOK_RULES),
-    "hook 180": _Kind("l_dh", "l_dh_a", HOOK_RULES),
-    "headed": _Kind("l_dt", "l_dt_a", HEAD_RULES),
-    "straight compression": _Kind("l_dc", "l_dc_a", COMPRESSION_RULES),
-    "lap tension": _Kind("l_st", "l_st", LAP_RULES),
-    "lap compression": _Kind("l_sc", "l_sc_a", COMPRESSION_LAP_RULES),
+    "straight tension": _Kind("l_d", "l_d_a", STRAIGHT_RULES, "#{} bar in tension developed"),
+    "hook 90": _Kind("l_dh", "l_dh_a", HOOK_RULES, "90-degree hook of #{} bar developed"),
+    "hook 180": _Kind("l_dh", "l_dh_a", HOOK_RULES, "180-degree hook of #{} bar developed"),
+    "headed": _Kind("l_dt", "l_dt_a", HEAD_RULES, "headed #{} bar developed"),
+    "straight compression": _Kind("l_dc", "l_dc_a", COMPRESSION_RULES, "#{} bar in compression developed"),
+    "lap tension": _Kind("l_st", "l_st", LAP_RULES, "tension lap of #{} bars"),
+    "lap compression": _Kind("l_sc", "l_sc_a", COMPRESSION_LAP_RULES, "compression lap of #{} bars"),
 }
 
 # Symbols that the schedule states, by the name of the column.
@@ -78,56 +92,58 @@ _STATED = {
     "A_s_provided": "A_s_provided",
 }
 
+# What is taken where the schedule states nothing does not come from the schedule.
+_DEFAULTS = {
+    "lamb": (1.0, "normalweight concrete, default of the schedule"),
+    "K_tr": (0.0, "no transverse reinforcement counted, default of the schedule"),
+}
 
-class _Working(Generic[T]):
-    """One row being worked on one pad; every symbol is stated or worked once."""
 
-    def __init__(self, pad: Pad[T], row: TerminationLike, edition: Edition) -> None:
-        self.pad = pad
-        self.row = row
-        self.edition = edition
-        self.rules = _KINDS[row.kind].rules
-        self.values: dict[str, T] = {}
+@dataclass(frozen=True)
+class _RowRules:
+    """The rules of a row's kind and edition, and what the row states."""
 
-    def value(self, symbol: str) -> T:
-        """The value of a symbol, worked or stated when it is first asked for."""
-        if symbol not in self.values:
-            choice = self.choice(symbol)
-            self.values[symbol] = self.stated(symbol) if choice is None else self.worked(choice)
-        return self.values[symbol]
+    row: TerminationLike
+    edition: Edition
 
     def choice(self, symbol: str) -> Choice | None:
-        rule = self.rules.get(symbol)
+        """The formula that serves a symbol for this row; None where the row states it."""
+        rule = _KINDS[self.row.kind].rules.get(symbol)
         return rule(self.row, self.edition) if rule else None
 
-    def worked(self, choice: Choice) -> T:
-        values = {symbol: self.value(symbol) for symbol in choice.formula.arguments}
-        if choice.reason:
-            self.pad.reason(choice.reason)
-        return self.pad.work(choice.formula, **values)
-
-    def stated(self, symbol: str) -> T:
+    def stated(self, symbol: str) -> Stated:
+        """What the row, its defaults or the bar standard state."""
         means = lookup(symbol).meaning
         if symbol == "d_b":
-            one = bar(self.row.bar)
-            return self.pad.given("d_b", one.d_b, f"{means}, {one}", "ASTM A615 and A706, nominal dimensions")
-        return self.pad.given(symbol, getattr(self.row, _STATED[symbol]), means, place(self.row))
+            return Stated(bar(self.row.bar).d_b, f"{means}, #{self.row.bar}", NOMINAL)
+        if symbol == "c_side" and self.row.kind == "headed":
+            means = "side cover of the headed bar"
+        value = getattr(self.row, _STATED[symbol])
+        default, source = _DEFAULTS.get(symbol, (None, ""))
+        return Stated(value, means, source if value == default else place(self.row))
 
 
 def required_length(pad: Pad[T], row: TerminationLike, edition: Edition) -> Required[T]:
-    """Work the length that a row requires, minima included, step by step on a pad.
+    """Work the length that a row requires, minima included, and verify the conditions beside it, step by step on a pad.
 
     Raises
     ------
     RangeError : everything that is wrong with the row, at once
     """
     refuse_problems(row, edition)
-    kind = _KINDS[row.kind]
-    working = _Working(pad, row, edition)
-    value = working.value(kind.symbol)
-    for text in notes(row, edition):
-        pad.reason(text)
-    return Required(kind.symbol, value, cited_clause(row, edition))
+    symbol = _KINDS[row.kind].symbol
+    working = Working(pad, _RowRules(row, edition))
+    working.state(symbol)
+    value = working.value(symbol)
+    notes = [_NOT_REDUCED] if row.A_s_required is not None and not _reduces(row, edition) else []
+    for text in notes:
+        pad.reason(f"{text}.")
+    asked = requirements(working, row, edition)
+    said = [str(one) if one.met else f"Not met: {one}" for one in asked]
+    return Required(symbol, value, cited_clause(row, edition), asked, (*said, *notes))
+
+
+_NOT_REDUCED = "No reduction for excess reinforcement: not permitted for this kind (25.4.10.1)"
 
 
 def cited_clause(row: TerminationLike, edition: Edition) -> str:
@@ -137,17 +153,35 @@ def cited_clause(row: TerminationLike, edition: Edition) -> str:
     return choice.formula.clause(edition.standard).number if choice else ""
 
 
-def notes(row: TerminationLike, edition: Edition) -> Iterator[str]:
-    """What a reader has to know beside the length: conditions, and a reduction that is not taken."""
-    for requirement in requirements(row, edition):
-        yield str(requirement) if requirement.met else f"Not met: {requirement}"
-    if row.A_s_required is not None and not _reduces(row, edition):
-        yield "No reduction for excess reinforcement: not permitted for this kind (25.4.10.1)"
-
-
 def _reduces(row: TerminationLike, edition: Edition) -> bool:
     choice = _KINDS[row.kind].rules[_KINDS[row.kind].symbol](row, edition)
     return choice is not None and "A_s_required" in choice.formula.arguments
+
+
+def work_termination(pad: Pad[T], row: TerminationLike, edition: Edition) -> tuple[T, CheckResult]:
+    """Work the length that a row requires and verify it against the length that the detail offers, on a pad.
+
+    Raises
+    ------
+    RangeError : everything that is wrong with the row, at once
+    """
+    required = required_length(pad, row, edition)
+    ratio = None
+    if row.available is not None:
+        available = pad.given("l_available", row.available, lookup("l_available").meaning, place(row))
+        what = f"{row.mark}: {_KINDS[row.kind].words.format(row.bar)} within the length available"
+        ratio = pad.verify(what, required.value, available, required.clause)
+    result = CheckResult(
+        mark=row.mark,
+        check=row.kind,
+        clause=required.clause,
+        combination="",
+        ratio=ratio,
+        verdict=verdict_of(ratio, all(one.met for one in required.requirements)),
+        values={required.symbol: measured(required.symbol, pad.number(required.value))},
+        notes=required.notes,
+    )
+    return required.value, result
 
 
 _FLOATS = FloatPad()
@@ -160,19 +194,7 @@ def check(row: TerminationLike, edition: Edition) -> CheckResult:
     ------
     RangeError : everything that is wrong with the row, at once
     """
-    required = required_length(_FLOATS, row, edition)
-    ratio = None if row.available is None else required.value / row.available
-    met = all(requirement.met for requirement in requirements(row, edition))
-    return CheckResult(
-        mark=row.mark,
-        check=row.kind,
-        clause=required.clause,
-        combination="",
-        ratio=ratio,
-        verdict=verdict_of(ratio, met),
-        values={required.symbol: measured(required.symbol, required.value)},
-        notes=tuple(notes(row, edition)),
-    )
+    return work_termination(_FLOATS, row, edition)[1]
 
 
 def check_all(rows: Iterable[TerminationLike], edition: Edition) -> list[CheckResult]:

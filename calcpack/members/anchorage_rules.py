@@ -3,13 +3,12 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Mapping
-from dataclasses import dataclass
 
 from calcpack.aci318 import compression, development, factors, heads, hooks, laps
 from calcpack.aci318.bars import bar
 from calcpack.aci318.editions import Edition
-from calcpack.formula import Formula
 from calcpack.members.termination import TerminationLike
+from calcpack.members.working import Choice
 
 __all__ = [
     "COMPRESSION_LAP_RULES",
@@ -18,17 +17,8 @@ __all__ = [
     "HOOK_RULES",
     "LAP_RULES",
     "STRAIGHT_RULES",
-    "Choice",
     "Rule",
 ]
-
-
-@dataclass(frozen=True)
-class Choice:
-    """The formula that serves, and why, in words for the sheet."""
-
-    formula: Formula
-    reason: str = ""
 
 
 Rule = Callable[[TerminationLike, Edition], Choice | None]

@@ -1,69 +1,30 @@
 """Axial strength, longitudinal bars and transverse reinforcement of one column.
 
-Bending, slenderness and shear are not covered here; `owed` names them.
+Each check is a procedure on a pad: the same steps serve the checks in bulk and the printed sheet. Bending,
+slenderness and shear are not covered here; `owed` names them.
 """
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Iterator, Sequence
+from collections.abc import Iterable, Sequence
 from typing import TypeVar
 
 from calcpack.aci318 import columns
-from calcpack.aci318.bars import bar
 from calcpack.aci318.editions import Edition
-from calcpack.formula import Formula
 from calcpack.members.column_problems import refuse_problems
-from calcpack.members.column_section import ColumnLike, ForceLike, bar_faces, section_source
+from calcpack.members.column_rules import NO_AGGREGATE, ColumnWorking
+from calcpack.members.column_section import ColumnLike, ForceLike, force_source
 from calcpack.members.column_ties import transverse_checks
 from calcpack.members.pad import FloatPad, Pad
-from calcpack.members.results import CheckResult, measured, verdict_of
+from calcpack.members.results import CheckResult
+from calcpack.members.working import Choice
 
-__all__ = ["axial_capacity", "check", "gross_area", "owed", "steel_area"]
+__all__ = ["axial_capacity", "check", "owed", "work_column"]
 
 T = TypeVar("T")
 _FLOATS = FloatPad()
-
-
-def gross_area(pad: Pad[T], column: ColumnLike) -> T:
-    """Work the gross area of the section."""
-    source = section_source(column)
-    if column.b is None:
-        return pad.work(columns.area_circular, h=pad.given("h", column.h, "diameter of column", source))
-    b = pad.given("b", column.b, "width of column along x", source)
-    h = pad.given("h", column.h, "depth of column along y", source)
-    return pad.work(columns.area_rectangular, b=b, h=h)
-
-
-def steel_area(pad: Pad[T], column: ColumnLike) -> T:
-    """Work the total area of the longitudinal bars."""
-    one = bar(column.bars.size)
-    n_bars = pad.given("n_bars", column.bars.count, "number of longitudinal bars", section_source(column))
-    A_b = pad.given("A_b", one.A_b, f"nominal area of one bar, {one}", "ASTM A615 and A706, nominal dimensions")
-    return pad.work(columns.area_of_bars, n_bars=n_bars, A_b=A_b)
-
-
-def axial_capacity(pad: Pad[T], column: ColumnLike, edition: Edition) -> tuple[T, T]:
-    """Work the axial strength at zero eccentricity and the maximum design axial strength."""
-    source = section_source(column)
-    A_g, A_st = gross_area(pad, column), steel_area(pad, column)
-    f_c = pad.given("f_c", column.f_c, "specified compressive strength of concrete", source)
-    f_y = pad.given("f_y", column.f_y, "specified yield strength of reinforcement", source)
-    if column.f_y > 80_000:
-        pad.reason(f"Bars above Grade 80 ({edition.name} 22.4.2.1).")
-        f_y_axial = pad.work(columns.yield_in_axial_strength, f_y=f_y)
-        P_o = pad.work(columns.axial_strength_high_grade, f_c=f_c, A_g=A_g, A_st=A_st, f_y_axial=f_y_axial)
-    else:
-        P_o = pad.work(columns.axial_strength, f_c=f_c, A_g=A_g, A_st=A_st, f_y=f_y)
-    maximum, factor = _by_confinement(column)
-    P_n_max = pad.work(maximum, P_o=P_o)
-    phi = pad.work(factor)
-    return P_o, pad.work(columns.design_axial_strength, phi=phi, P_n_max=P_n_max)
-
-
-def _by_confinement(column: ColumnLike) -> tuple[Formula, Formula]:
-    if column.ties.kind == "spiral":
-        return columns.axial_strength_maximum_spiral, columns.phi_spiral
-    return columns.axial_strength_maximum_tied, columns.phi_tied
+_AXIAL = "22.4.2"
+_UNFACTORED = "Forces are listed by load, not factored: the axial force is not verified."
 
 
 def check(column: ColumnLike, forces: Iterable[ForceLike], edition: Edition) -> list[CheckResult]:
@@ -73,63 +34,96 @@ def check(column: ColumnLike, forces: Iterable[ForceLike], edition: Edition) -> 
     ------
     RangeError : everything that is wrong with the column, at once
     """
+    return work_column(_FLOATS, column, forces, edition)
+
+
+def work_column(pad: Pad[T], column: ColumnLike, forces: Iterable[ForceLike], edition: Edition) -> list[CheckResult]:
+    """Work and verify every check of one column on a pad.
+
+    Raises
+    ------
+    RangeError : everything that is wrong with the column, at once
+    """
     refuse_problems(column, edition)
-    return [
-        _axial(column, list(forces), edition),
-        *_reinforcement(column, edition),
-        *transverse_checks(column, edition),
-    ]
+    work = ColumnWorking(pad, column, edition)
+    work.state("A_g", "A_st", "phi_P_n_max", "c_cover", "d_b", "d_bt", "s")
+    if column.aggregate is not None:
+        work.state("d_agg")
+    if column.ties.kind == "spiral":
+        work.state("rho_s", "rho_s_min")
+    pad.heading("Axial strength")
+    results = [_axial(work, list(forces))]
+    pad.heading("Longitudinal bars")
+    results += [_reinforcement_ratio(work), _number_of_bars(work), _bar_spacing(work)]
+    pad.heading("Spiral" if column.ties.kind == "spiral" else "Ties")
+    return [*results, *transverse_checks(work)]
 
 
-def _axial(column: ColumnLike, forces: Sequence[ForceLike], edition: Edition) -> CheckResult:
-    P_o, capacity = axial_capacity(_FLOATS, column, edition)
-    # Tension is not a matter of this check: its ratio is zero, and `owed` names the check it needs.
+def axial_capacity(pad: Pad[T], column: ColumnLike, edition: Edition) -> tuple[T, T]:
+    """Work the axial strength at zero eccentricity and the maximum design axial strength."""
+    return _capacity(ColumnWorking(pad, column, edition))
+
+
+def _capacity(work: ColumnWorking[T]) -> tuple[T, T]:
+    _, _, P_o, _, capacity = [work.value(symbol) for symbol in ("A_g", "A_st", "P_o", "P_n_max", "phi_P_n_max")]
+    return P_o, capacity
+
+
+def _axial(work: ColumnWorking[T], forces: Sequence[ForceLike]) -> CheckResult:
+    P_o, capacity = _capacity(work)
+    values = {"P_o": P_o, "phi_P_n_max": capacity}
     governing = max(forces, key=lambda force: force.P, default=None)
-    ratio = None if governing is None else max(governing.P, 0.0) / capacity
-    values = {"P_o": measured("P_o", P_o), "phi_P_n_max": measured("phi_P_n_max", capacity)}
-    if governing is not None:
-        values["P_u"] = measured("P_u", governing.P)
-    combination = (governing.combination if governing else None) or ""
-    clause = "22.4.2"
-    return CheckResult(column.mark, "axial strength", clause, combination, ratio, verdict_of(ratio), values)
+    if governing is None:
+        work.pad.reason("No forces listed for this column: its axial strength is stated, not verified.")
+        return work.result("axial strength", _AXIAL, None, values)
+    if governing.combination is None:
+        return work.result("axial strength", _AXIAL, None, values, work.note(_UNFACTORED))
+    name = governing.combination
+    work.pad.reason(_why(name, len(forces)))
+    means = f"factored axial force, {name}, compression positive"
+    values["P_u"] = P_u = work.pad.given("P_u", governing.P, means, force_source(governing, work.column))
+    if governing.P <= 0:
+        # Tension is not a matter of this check: its ratio is zero, and `owed` names the check it needs.
+        work.pad.reason("No combination compresses the column: its maximum axial strength is not called on.")
+        return work.result("axial strength", _AXIAL, 0.0, values, combination=name)
+    ratio = work.verify("axial force within the maximum axial strength", P_u, capacity, _AXIAL)
+    return work.result("axial strength", _AXIAL, ratio, values, combination=name)
 
 
-def _reinforcement(column: ColumnLike, edition: Edition) -> Iterator[CheckResult]:
-    A_g, A_st = gross_area(_FLOATS, column), steel_area(_FLOATS, column)
-    rho_g = columns.reinforcement_ratio(A_st=A_st, A_g=A_g)
-    low, high = columns.reinforcement_ratio_minimum(), columns.reinforcement_ratio_maximum()
-    ratio = max(low / rho_g, rho_g / high)
-    values = {"rho_g": measured("rho_g", rho_g), "A_st": measured("A_st", A_st), "A_g": measured("A_g", A_g)}
-    clause = columns.reinforcement_ratio.clause(edition.standard).number
-    yield CheckResult(column.mark, "reinforcement ratio", clause, "", ratio, verdict_of(ratio), values)
-    yield _number_of_bars(column, edition)
-    yield _bar_spacing(column, edition)
+def _why(name: str, count: int) -> str:
+    listed = "the only combination listed" if count == 1 else f"the largest axial force of {count} combinations"
+    return f"Governing: {name}, {listed}."
 
 
-def _number_of_bars(column: ColumnLike, edition: Edition) -> CheckResult:
-    rule = columns.bars_minimum_spiral if column.ties.kind == "spiral" else columns.bars_minimum_tied
-    least = rule()
-    ratio = least / column.bars.count
-    values = {"n_bars": measured("n_bars", column.bars.count), "n_min": measured("n_min", least)}
-    clause = rule.clause(edition.standard).number
-    return CheckResult(column.mark, "number of bars", clause, "", ratio, verdict_of(ratio), values)
+def _reinforcement_ratio(work: ColumnWorking[T]) -> CheckResult:
+    rho_g, clause = work.value("rho_g"), work.clause(columns.reinforcement_ratio)
+    low = work.verify("least ratio of longitudinal reinforcement", work.value("rho_g_min"), rho_g, clause)
+    high = work.verify("largest ratio of longitudinal reinforcement", rho_g, work.value("rho_g_max"), clause)
+    values = {"rho_g": rho_g, "A_st": work.value("A_st"), "A_g": work.value("A_g")}
+    return work.result("reinforcement ratio", clause, max(low, high), values)
 
 
-def _bar_spacing(column: ColumnLike, edition: Edition) -> CheckResult:
-    d_b = bar(column.bars.size).d_b
-    if column.aggregate is None:
-        rule = columns.bar_spacing_minimum
-        least = rule(d_b=d_b)
-        notes: tuple[str, ...] = ("Aggregate size not stated: 4/3 d_agg is not checked.",)
-    else:
-        rule = columns.bar_spacing_minimum_aggregate
-        least = rule(d_b=d_b, d_agg=column.aggregate)
-        notes = ()
-    clear = min(face.s_clear for face in bar_faces(column))
-    ratio = least / clear if clear > 0 else None
-    values = {"s_clear": measured("s_clear", clear), "s_clear_min": measured("s_clear_min", least)}
-    clause, verdict = rule.clause(edition.standard).number, verdict_of(ratio, clear > 0)
-    return CheckResult(column.mark, "bar spacing", clause, "", ratio, verdict, values, notes)
+def _number_of_bars(work: ColumnWorking[T]) -> CheckResult:
+    n_bars, n_min, clause = work.value("n_bars"), work.value("n_min"), work.clause(columns.bars_minimum_tied)
+    ratio = work.verify("number of longitudinal bars", n_min, n_bars, clause)
+    return work.result("number of bars", clause, ratio, {"n_bars": n_bars, "n_min": n_min})
+
+
+def _bar_spacing(work: ColumnWorking[T]) -> CheckResult:
+    closest = min(work.faces, key=lambda face: work.pad.number(face.s_clear))
+    known = work.column.aggregate is not None
+    notes = () if known else work.note(NO_AGGREGATE)
+    rule = columns.bar_spacing_minimum_aggregate if known else columns.bar_spacing_minimum
+    least, clause = work.work(Choice(rule)), work.clause(rule)
+    values = {"s_clear": closest.s_clear, "s_clear_min": least}
+    if work.pad.number(closest.s_clear) > 0:
+        ratio = work.verify("clear spacing of longitudinal bars", least, closest.s_clear, clause)
+        return work.result("bar spacing", clause, ratio, values, notes)
+    # No clear spacing is left to compare with. The least one is at least 1.5 d_b, more than d_b between centres.
+    reason = f"Bars {closest.name} overlap or touch: the least clear spacing exceeds even the spacing of their centres."
+    pitch = work.work(Choice(closest.pitch, reason), **closest.own)
+    work.verify("clear spacing of longitudinal bars, which overlap", least, pitch, clause)
+    return work.result("bar spacing", clause, None, values, notes, met=False)
 
 
 def owed(column: ColumnLike, forces: Iterable[ForceLike]) -> list[str]:

@@ -9,7 +9,7 @@ from calcpack.aci318.editions import Edition
 from calcpack.aci318.limits import CONCRETE, YIELD_LEAST
 from calcpack.errors import Problem, RangeError
 from calcpack.formula import Limit
-from calcpack.members.column_section import ColumnLike, section_source
+from calcpack.members.column_section import ColumnLike, row_of
 
 __all__ = ["refuse_problems"]
 
@@ -25,7 +25,7 @@ def refuse_problems(column: ColumnLike, edition: Edition) -> None:
     if not problems:
         problems = list(_fit(column))
     if problems:
-        raise RangeError(f"column {column.mark}", problems, section_source(column))
+        raise RangeError(f"column {column.mark}", problems, row_of(column))
 
 
 def _sizes(column: ColumnLike) -> Iterator[Problem]:
@@ -72,7 +72,11 @@ def _bars(column: ColumnLike) -> Iterator[Problem]:
 
 
 def _fit(column: ColumnLike) -> Iterator[Problem]:
-    taken = 2 * (column.cover + bar(column.ties.size).d_b + bar(column.bars.size).d_b)
+    d_bt = bar(column.ties.size).d_b
+    if column.ties.spacing <= d_bt:
+        given = f"{column.ties.kind}: #{column.ties.size} at {column.ties.spacing:,g} in"
+        yield Problem(given, f"a spacing above the diameter of the bar, {d_bt:,g} in")
+    taken = 2 * (column.cover + d_bt + bar(column.bars.size).d_b)
     least = column.h if column.b is None else min(column.b, column.h)
     if least <= taken:
         yield Problem(f"{least:,g} in across", f"more than cover, ties and bars take: {taken:,g} in")

@@ -1,24 +1,23 @@
-"""What the checks of columns read: one row of the column schedule and its forces, and where its bars stand."""
+"""What the checks of columns read: one row of the column schedule and its forces."""
 
 from __future__ import annotations
 
 from dataclasses import dataclass
 from typing import Protocol
 
-from calcpack.aci318 import columns
-from calcpack.aci318.bars import bar
+from calcpack.members.sources import position, source_text
 
 __all__ = [
     "Bars",
     "BarsLike",
     "Column",
     "ColumnLike",
-    "Face",
     "Force",
     "ForceLike",
     "Ties",
     "TiesLike",
-    "bar_faces",
+    "force_source",
+    "row_of",
     "section_source",
 ]
 
@@ -125,6 +124,11 @@ class ColumnLike(Protocol):
         ...
 
     @property
+    def source(self) -> str:
+        """Drawing and revision that the row states; may be empty."""
+        ...
+
+    @property
     def file(self) -> str:
         """Where the row stands."""
         ...
@@ -173,6 +177,16 @@ class ForceLike(Protocol):
         """Torsion."""
         ...
 
+    @property
+    def file(self) -> str:
+        """Where the row stands."""
+        ...
+
+    @property
+    def row(self) -> int:
+        """Its number in the file."""
+        ...
+
 
 @dataclass(frozen=True)
 class Bars:
@@ -208,6 +222,7 @@ class Column:
     f_yt: float | None = None
     aggregate: float | None = None
     l_u: float | None = None
+    source: str = ""
     file: str = ""
     row: int = 0
 
@@ -223,38 +238,20 @@ class Force:
     Vx: float = 0.0
     Vy: float = 0.0
     T: float = 0.0
+    file: str = ""
+    row: int = 0
 
 
-@dataclass(frozen=True)
-class Face:
-    """Bars along one face, or around a circle: their number and clear spacing."""
-
-    name: str
-    n_face: int
-    s_clear: float
-
-
-def bar_faces(column: ColumnLike) -> list[Face]:
-    """The faces of a rectangular column, or the circle of a circular one, with the clear spacing of their bars."""
-    d_b, d_bt = bar(column.bars.size).d_b, bar(column.ties.size).d_b
-    if column.b is None or column.bars.n_x is None or column.bars.n_y is None:
-        D_s = columns.bar_circle(h=column.h, c_cover=column.cover, d_bt=d_bt, d_b=d_b)
-        return [
-            Face(
-                "circle",
-                column.bars.count,
-                columns.bar_spacing_circular.function(D_s=D_s, n_bars=column.bars.count, d_b=d_b),
-            )
-        ]
-    sides = (("along x", column.b, column.bars.n_x), ("along y", column.h, column.bars.n_y))
-    return [
-        Face(name, n, columns.bar_spacing_face(b=width, c_cover=column.cover, d_bt=d_bt, n_face=n, d_b=d_b))
-        for name, width, n in sides
-    ]
+def row_of(column: ColumnLike) -> str:
+    """Where the column's row stands: ``inputs/columns.csv, row 2``."""
+    return position(column, f"column schedule, mark {column.mark}")
 
 
 def section_source(column: ColumnLike) -> str:
-    """Where the column is scheduled, as a source."""
-    if not column.file:
-        return f"column schedule, mark {column.mark}"
-    return f"{column.file}, row {column.row}" if column.row else column.file
+    """Where the column's values come from: ``S-401, rev 2 (inputs/columns.csv, row 2)``."""
+    return source_text(column.source, row_of(column))
+
+
+def force_source(force: ForceLike, column: ColumnLike) -> str:
+    """Where a force comes from: ``inputs/forces.csv, row 3``."""
+    return position(force, f"member forces of {column.mark}")

@@ -33,6 +33,17 @@ class Pad(Protocol[T]):
         """Say why the next step is taken."""
         ...
 
+    def verify(self, what: str, demand: T, capacity: T, clause: str) -> float:
+        """Compare two values of one dimension, the capacity above zero, and return demand over capacity.
+
+        For a least value that has to be provided, the least value is the demand and what is provided the capacity.
+        """
+        ...
+
+    def heading(self, text: str) -> None:
+        """Head the steps that follow."""
+        ...
+
 
 class FloatPad:
     """A pad of plain floats: nothing is kept, for checks in bulk."""
@@ -51,4 +62,12 @@ class FloatPad:
         return value
 
     def reason(self, text: str) -> None:
+        """Dropped."""
+
+    def verify(self, what: str, demand: float, capacity: float, clause: str) -> float:
+        """Demand over capacity."""
+        del what, clause
+        return demand / capacity
+
+    def heading(self, text: str) -> None:
         """Dropped."""

@@ -4,7 +4,9 @@ from __future__ import annotations
 
 from collections.abc import Mapping
 from dataclasses import dataclass, field
+from functools import cache
 
+from calcpack.ledger import passes
 from calcpack.symbols import lookup
 from calcpack.units import convert, display_unit
 
@@ -51,10 +53,15 @@ def verdict_of(ratio: float | None, met: bool = True) -> str:
         return "NG"
     if ratio is None:
         return ""
-    return "OK" if ratio <= 1.0 else "NG"
+    return "OK" if passes(ratio) else "NG"
 
 
 def measured(symbol: str, value: float) -> tuple[float, str]:
     """A coherent value as number and display unit: forces in kip, lengths in inches."""
-    unit = display_unit(lookup(symbol).dimension)
+    unit = _unit(symbol)
     return (convert(value, unit), unit) if unit else (value, "")
+
+
+@cache
+def _unit(symbol: str) -> str:
+    return display_unit(lookup(symbol).dimension)

@@ -5,7 +5,9 @@ from __future__ import annotations
 from dataclasses import dataclass
 from typing import Protocol
 
-__all__ = ["COATINGS", "KINDS", "Termination", "TerminationLike", "place"]
+from calcpack.members.sources import position, source_text
+
+__all__ = ["COATINGS", "KINDS", "Termination", "TerminationLike", "place", "row_of"]
 
 KINDS = (
     "straight tension",
@@ -128,6 +130,11 @@ class TerminationLike(Protocol):
         ...
 
     @property
+    def source(self) -> str:
+        """Drawing and revision that the row states; may be empty."""
+        ...
+
+    @property
     def file(self) -> str:
         """Where the row stands."""
         ...
@@ -163,12 +170,16 @@ class Termination:
     lap_class: str | None = None
     available: float | None = None
     spacing: float | None = None
+    source: str = ""
     file: str = ""
     row: int = 0
 
 
+def row_of(row: TerminationLike) -> str:
+    """Where the row stands: ``inputs/anchorage.csv, row 14``."""
+    return position(row, f"schedule, mark {row.mark}")
+
+
 def place(row: TerminationLike) -> str:
-    """Where the row stands, as a source: ``inputs/anchorage.csv, row 14``."""
-    if not row.file:
-        return f"schedule, mark {row.mark}"
-    return f"{row.file}, row {row.row}" if row.row else row.file
+    """Where the row's values come from: ``S-301, detail 1, rev 2 (inputs/anchorage.csv, row 14)``."""
+    return source_text(row.source, row_of(row))

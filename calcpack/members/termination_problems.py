@@ -1,4 +1,4 @@
-"""What is wrong with a row of the anchorage schedule, and which conditions of its provision it does not meet."""
+"""What is wrong with a row of the anchorage schedule."""
 
 from __future__ import annotations
 
@@ -9,10 +9,9 @@ from calcpack.aci318.editions import Edition
 from calcpack.aci318.limits import CONCRETE, YIELD_LEAST
 from calcpack.errors import Problem, RangeError
 from calcpack.formula import Limit
-from calcpack.members.results import Requirement
-from calcpack.members.termination import COATINGS, KINDS, TerminationLike, place
+from calcpack.members.termination import COATINGS, KINDS, TerminationLike, row_of
 
-__all__ = ["refuse_problems", "requirements"]
+__all__ = ["refuse_problems"]
 
 _LARGEST = 1e30
 _SMALLEST = 1e-9
@@ -29,7 +28,7 @@ def refuse_problems(row: TerminationLike, edition: Edition) -> None:
     """
     problems = [*_words(row), *_sizes(row), *_materials(row, edition), *_lengths(row), *_areas(row), *_coating(row)]
     if problems:
-        raise RangeError(f"{row.mark}: {row.kind}", problems, place(row))
+        raise RangeError(f"{row.mark}: {row.kind}", problems, row_of(row))
 
 
 def _words(row: TerminationLike) -> Iterator[Problem]:
@@ -104,7 +103,7 @@ def _lengths(row: TerminationLike) -> Iterator[Problem]:
         value = getattr(row, name)
         if value is not None and not _SMALLEST <= value <= _LARGEST:
             yield Problem(f"{name} = {value:,g} in", "a length above zero", "correct it, or leave it blank")
-    if not 0 <= row.K_tr <= _LARGEST:
+    if row.K_tr != 0 and not _SMALLEST <= row.K_tr <= _LARGEST:
         yield Problem(f"K_tr = {row.K_tr:,g} in", "a length, zero or more (25.4.2)")
     if row.c_b is not None and row.bar in BARS and _SMALLEST <= row.c_b <= BARS[row.bar].d_b / 2:
         yield Problem(
@@ -140,52 +139,3 @@ def _coating(row: TerminationLike) -> Iterator[Problem]:
             "the coating factor depends on clear cover and clear spacing (25.4.2, table of factors)",
             "state both, or c_b",
         )
-
-
-def requirements(row: TerminationLike, edition: Edition) -> tuple[Requirement, ...]:
-    """Conditions of the provision that the row shows to be met or not, beside the length."""
-    return (*_close_bars(row, edition), *_stated_c_b(row), *_head_clearances(row, edition))
-
-
-def _centre_spacing(row: TerminationLike) -> float | None:
-    if row.spacing is not None:
-        return row.spacing
-    return None if row.clear_spacing is None else row.clear_spacing + BARS[row.bar].d_b
-
-
-def _close_bars(row: TerminationLike, edition: Edition) -> Iterator[Requirement]:
-    clause = {"straight tension": "25.4.2.2", "lap tension": "25.5.1.5"}.get(row.kind)
-    if clause is None or not edition.close_bars_need_ties or row.f_y < 80_000:
-        return
-    spacing, d_b = _centre_spacing(row), BARS[row.bar].d_b
-    least = f"K_tr = {row.K_tr:,g} in, at least 0.5 d_b = {0.5 * d_b:,g} in"
-    if spacing is None:
-        if row.K_tr < 0.5 * d_b:
-            yield Requirement(clause, f"if bars stand closer than 6 in: {least}", True)
-    elif spacing < 6:
-        yield Requirement(clause, f"bars at {spacing:,g} in, f_y = {row.f_y:,g} psi: {least}", row.K_tr >= 0.5 * d_b)
-
-
-def _stated_c_b(row: TerminationLike) -> Iterator[Requirement]:
-    if row.c_b is None or row.kind not in ("straight tension", "lap tension"):
-        return
-    d_b, spacing = BARS[row.bar].d_b, _centre_spacing(row)
-    largest = [row.clear_cover + d_b / 2] if row.clear_cover is not None else []
-    largest += [spacing / 2] if spacing is not None else []
-    # One per cent for dimensions rounded on the drawing.
-    if largest and row.c_b > 1.01 * min(largest):
-        yield Requirement("2.2", f"c_b = {row.c_b:,g} in, stated cover and spacing give {min(largest):,g} in", False)
-
-
-def _head_clearances(row: TerminationLike, edition: Edition) -> Iterator[Requirement]:
-    if row.kind != "headed":
-        return
-    d_b, spacing = BARS[row.bar].d_b, _centre_spacing(row)
-    if row.clear_cover is not None:
-        text = f"clear cover {row.clear_cover:,g} in, at least 2 d_b = {2 * d_b:,g} in"
-        yield Requirement("25.4.4.1", text, row.clear_cover >= 2 * d_b)
-    if spacing is not None:
-        # 318-14 asks for a clear spacing of 4 d_b, 318-19 for 3 d_b centre to centre.
-        least = edition.head_spacing * d_b
-        text = f"bars at {spacing:,g} in centre to centre, at least {least:,g} in"
-        yield Requirement("25.4.4.1", text, spacing >= least)

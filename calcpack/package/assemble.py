@@ -41,7 +41,8 @@ def assemble(job: Job, content: Content, open_items: Sequence[Open], state: str)
     state : ``draft``, ``preliminary`` or ``final``
     """
     newest = job.newest
-    givens = _register(entry for entry in content.ledger if entry.kind == "given")
+    stated = [entry for entry in content.ledger if entry.kind == "given"]
+    givens = _register(stated)
     return {
         "job": {name: getattr(job, name) for name in ("number", "title", "location", "client", "firm", "document")},
         "codes": {"building": job.codes.building, "concrete": job.codes.concrete, "loads": job.codes.loads},
@@ -68,7 +69,7 @@ def assemble(job: Job, content: Content, open_items: Sequence[Open], state: str)
         },
         "standards": _standards(job, content.ledger),
         "documents": _documents(content.ledger),
-        "materials": [row for row in givens if row["symbol"] in _MATERIALS],
+        "materials": _materials(stated),
         "givens": givens,
         "assumptions": [row for row in givens if row["status"] == "assumed"],
         "ratios": [_ratio(content.ledger, entry) for entry in content.ledger if entry.kind == "verdict"],
@@ -116,16 +117,36 @@ def _names(job: Job, role: str) -> str:
 
 
 def _register(entries: Iterable[Entry]) -> list[dict[str, Any]]:
-    """Givens, the same value from the same source once, with every sheet that states it."""
+    """Givens, the same value from the same document once, with every sheet that states it."""
+    return _merged(entries, ("symbol", "means", "shown", "source", "status"))
+
+
+def _materials(entries: Iterable[Entry]) -> list[dict[str, Any]]:
+    """Materials, each strength once, with every document that states it."""
+    found = [entry for entry in entries if entry.symbol in _MATERIALS]
+    order = {name: index for index, name in enumerate(_MATERIALS)}
+    rows = _merged(found, ("symbol", "means", "shown", "status"))
+    return sorted(rows, key=lambda row: (order[row["symbol"]], row["means"]))
+
+
+def _merged(entries: Iterable[Entry], alike: Sequence[str]) -> list[dict[str, Any]]:
     rows: dict[tuple[str, ...], dict[str, Any]] = {}
     for entry in entries:
         stated = {name: str(getattr(entry, name)) for name in ("symbol", "means", "shown", "source", "status")}
-        row = rows.setdefault(tuple(stated.values()), {"id": entry.id, **stated, "sheets": {}})
+        stated["source"] = _ROW.sub("", entry.source)
+        row = rows.setdefault(
+            tuple(stated[name] for name in alike), {"id": entry.id, **stated, "sheets": {}, "from": {}}
+        )
         row["sheets"].setdefault(entry.sheet, entry.id)
+        row["from"].setdefault(stated["source"])
     return [
-        {**row, "sheet": ", ".join(row["sheets"]), "sheets": [list(item) for item in row["sheets"].items()]}
+        {**row, "sheet": ", ".join(row["sheets"]), "sheets": list(row["sheets"]), "source": "; ".join(row.pop("from"))}
         for row in rows.values()
     ]
+
+
+# The row of a table stands beside the value on its sheet; a register names the document.
+_ROW = re.compile(r" \(inputs/[^()]*\)$")
 
 
 def _ratio(ledger: Ledger, entry: Entry) -> dict[str, Any]:
@@ -195,7 +216,7 @@ def _validated(group: Sequence[Any]) -> dict[str, Any]:
     return {
         "id": worst.id,
         "what": count,
-        "source": worst.source,
+        "source": _without_addresses(worst.source),
         "kind": worst.kind,
         "edition": ", ".join(dict.fromkeys(case.edition for case in group)),
         "expected": f"{worst.expected:g}",
@@ -204,3 +225,9 @@ def _validated(group: Sequence[Any]) -> dict[str, Any]:
         "tolerance": f"{worst.tolerance:g} %",
         "holds": all(case.holds for case in group),
     }
+
+
+def _without_addresses(source: str) -> str:
+    """A source without web addresses: the printed record names it, the data hold the rest."""
+    parts = [part.strip() for part in re.split(r"[;,]\s*(?=\S*\w\.\w\S*/|https?:|\w+\.(?:com|gov|org)\b)", source)]
+    return parts[0].removesuffix(".")

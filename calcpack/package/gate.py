@@ -7,7 +7,7 @@ from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 
 from calcpack.job import Job
-from calcpack.package.collect import Content
+from calcpack.package.collect import Content, SheetContent
 from calcpack.package.members import JobChecks
 
 __all__ = ["Open", "is_final", "open_items"]
@@ -54,10 +54,10 @@ def _assumed(job: Job, content: Content | None) -> Iterator[Open]:
     listed = {row.symbol for row in job.givens if row.status == "assumed"}
     for row in job.givens:
         if row.symbol in listed:
-            yield Open("assumed", f"{row.symbol}: {row.means} = {row.text}", "inputs/givens.toml")
+            yield Open("assumed", f"{row.means} = {row.text}", "inputs/givens.toml")
     for entry in content.ledger if content else ():
         if entry.kind == "given" and entry.status == "assumed" and entry.symbol not in listed:
-            yield Open("assumed", f"{entry.symbol}: {entry.means} = {entry.shown}", f"sheet {entry.sheet}")
+            yield Open("assumed", f"{entry.means} = {entry.shown}", f"sheet {entry.sheet}")
 
 
 def _failed(content: Content) -> Iterator[Open]:
@@ -70,7 +70,11 @@ def _foreign(content: Content) -> Sequence[Open]:
     from calcpack.package.blocks import foreign_outputs
 
     return [
-        Open("output", f"cell {cell} shows something that is not of the sheet; it is not printed", sheet.path, False)
+        Open("output", f"{_cell(sheet, index)} shows {words}: not of the sheet, not printed", sheet.path, False)
         for sheet in content.sheets
-        for cell in foreign_outputs(sheet.notebook)
+        for index, words in foreign_outputs(sheet.notebook)
     ]
+
+
+def _cell(sheet: SheetContent, index: int) -> str:
+    return f"cell [{sheet.notebook['cells'][index]['execution_count']}]"

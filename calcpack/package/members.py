@@ -62,7 +62,8 @@ def check_members(job: Job) -> JobChecks:
 
 
 def _tables(job: Job) -> tuple[Any, Any, Any]:
-    tables, errors = [], list[InputError]()
+    tables: list[Any] = []
+    errors: list[InputError] = []
     for reader in (read_columns, read_forces, read_terminations):
         try:
             tables.append(reader(job.root))

@@ -12,7 +12,6 @@ import hashlib
 import json
 import os
 import shutil
-import tempfile
 from collections.abc import Callable, Iterator, Sequence
 from concurrent.futures import FIRST_COMPLETED, Future, ThreadPoolExecutor, wait
 from dataclasses import dataclass, field
@@ -24,6 +23,7 @@ from calcpack.errors import LedgerError, Problem, SheetError
 from calcpack.items import MIME
 from calcpack.job import Job
 from calcpack.ledger import Entry, Ledger
+from calcpack.package.execute import Outcome, execute
 from calcpack.package.reads import Inputs, file_digest
 from calcpack.package.release import release_key
 
@@ -92,6 +92,7 @@ class _Run:
     ledgers: dict[str, Ledger] = field(default_factory=dict)
     failures: list[Problem] = field(default_factory=list)
     records: dict[Path, dict[str, Any] | None] = field(default_factory=dict)
+    begun: dict[Path, str] = field(default_factory=dict)
     reasons: dict[Path, str] = field(default_factory=dict)
     _last: tuple[int, int] = (-1, -1)
 
@@ -125,7 +126,7 @@ class _Run:
                     if reason == _LATER:
                         todo.append(path)
                     elif reason:
-                        running[pool.submit(_execute, self.results, path)] = path
+                        running[pool.submit(execute, self.results, path)] = path
                         self.progress(f"running {path.name}: {reason}")
                         self.reasons[path] = reason
                 if not running:
@@ -189,9 +190,10 @@ class _Run:
                 self.records[path] = None
         return self.records[path]
 
-    def finish(self, path: Path, outcome: _Outcome) -> str:
+    def finish(self, path: Path, outcome: Outcome) -> str:
         """Take in the outcome of a run; returns the sheet that has to run first, if any."""
         if outcome.needs and self.waiting.get(path) != outcome.needs:
+            self.begun[path] = sheet_id(outcome.notebook)
             return outcome.needs
         name = f"sheets/{path.name}"
         if outcome.needs:
@@ -202,8 +204,10 @@ class _Run:
             self.failures.append(outcome.failure)
             self.progress(f"failed  {path.name}")
             return ""
-        if not sheet_id(outcome.notebook):
-            problem = Problem("no sheet", "one Sheet(id, subject) in each notebook", "sheet = Sheet('C-01', '…')", name)
+        made = [item["id"] for _, item in items_of(outcome.notebook) if item["type"] == "sheet"]
+        if len(made) != 1:
+            found = f"{len(made)} sheets: {', '.join(made)}" if made else "no sheet"
+            problem = Problem(found, "one Sheet(id, subject) in each notebook", "sheet = Sheet('C-01', '…')", name)
             self.failures.append(problem)
             return ""
         self.settle(path, outcome.notebook, self.reasons.get(path, ""))
@@ -242,97 +246,27 @@ class _Run:
         leave(self.results, executed.id, ledger, entries)
 
     def circular(self, todo: Sequence[Path]) -> SheetError | LedgerError:
-        wants = {path: self.waiting.get(path, "?") for path in todo}
-        names = {(self.kept(path) or {}).get("sheet") or path.stem for path in todo}
-        if len(todo) > 1 or set(wants.values()) & names:
-            chain = "; ".join(f"{path.name} takes a value from sheet {sheet}" for path, sheet in wants.items())
-            return LedgerError(f"circular reference between sheets: {chain}")
-        have = f"sheets that ran: {', '.join(sorted(self.ledgers)) or 'none'}"
-        problems = [Problem(f"{path.name} takes a value from sheet {sheet}", have) for path, sheet in wants.items()]
-        return SheetError("a sheet that is not there", problems)
+        """Why nothing moves: a sheet that is not there, or else sheets that wait for each other in a ring."""
+        named = {self.begun.get(path) or (self.kept(path) or {}).get("sheet", ""): path for path in todo}
+        wants = {path: self.wanted(path) for path in todo}
+        words = {path: f"{path.name} takes a value from sheet {sheet}" for path, sheet in wants.items()}
+        lost = [path for path in todo if wants[path] not in named]
+        if lost:
+            have = f"sheets that ran: {', '.join(sorted(self.ledgers)) or 'none'}"
+            return SheetError("a sheet that is not there", [Problem(words[path], have) for path in lost])
+        ring = [todo[0]]
+        while (after := named[wants[ring[-1]]]) not in ring:
+            ring.append(after)
+        chain = "; ".join(words[path] for path in ring[ring.index(after) :])
+        return LedgerError(f"circular reference between sheets: {chain}")
+
+    def wanted(self, path: Path) -> str:
+        """The sheet a notebook waits for: the one its last attempt asked for, or one that its kept run read."""
+        read = [key.split(" ", 2)[1] for key, _ in (self.kept(path) or {"reads": []})["reads"] if key[:6] == "sheet "]
+        return self.waiting.get(path) or next(sheet for sheet in read if sheet not in self.ledgers)
 
 
 _LATER = "later"
-
-
-@dataclass(frozen=True)
-class _Outcome:
-    """What came of executing a notebook: the executed one, or a failure, or the sheet it has to wait for."""
-
-    notebook: Any = None
-    opened: tuple[str, ...] = ()
-    failure: Problem | None = None
-    needs: str = ""
-
-
-def _execute(results: Path, path: Path) -> _Outcome:
-    import nbformat
-    from nbclient.exceptions import CellExecutionError, DeadKernelError
-
-    notebook = nbformat.read(path, as_version=4)
-    for cell in notebook.cells:
-        if cell.cell_type == "code":
-            cell.outputs, cell.execution_count = [], None
-    with tempfile.TemporaryDirectory(prefix="cp") as scratch:
-        opened = Path(scratch) / "opened"
-        environment = {**_environment(results, scratch), "CALCPACK_OPENED": str(opened)}
-        try:
-            _client(notebook, path, Path(scratch)).execute(env=environment)
-        except CellExecutionError as error:
-            return _failed(notebook, path, error)
-        except DeadKernelError:
-            return _Outcome(
-                failure=Problem("the kernel died", "a notebook that runs", "run it by hand", f"sheets/{path.name}")
-            )
-        files = tuple(sorted(set(opened.read_text("utf-8").split("\n")) - {""})) if opened.exists() else ()
-    return _Outcome(json.loads(nbformat.writes(notebook)), files)
-
-
-def _environment(results: Path, scratch: str) -> dict[str, str]:
-    # The user's own IPython and matplotlib settings must not reach a calculation, nor be written to.
-    return {
-        **os.environ,
-        "CALCPACK_RESULTS": str(results),
-        "IPYTHONDIR": f"{scratch}/ipython",
-        "MPLCONFIGDIR": f"{scratch}/matplotlib",
-        "PYTHONHASHSEED": "0",
-        "PYTHONDONTWRITEBYTECODE": "1",
-    }
-
-
-def _client(notebook: Any, path: Path, scratch: Path) -> Any:
-    from jupyter_client.manager import AsyncKernelManager
-    from nbclient import NotebookClient
-
-    class Manager(AsyncKernelManager):
-        """Kernels that talk through files in the scratch folder: no port, no trace elsewhere."""
-
-        def __init__(self, **options: Any) -> None:
-            super().__init__(transport="ipc", connection_file=str(scratch / "k.json"), **options)
-
-    return NotebookClient(
-        notebook,
-        timeout=600,
-        kernel_name="python3",
-        kernel_manager_class=Manager,
-        resources={"metadata": {"path": str(path.parent)}},
-        shutdown_kernel="immediate",
-        store_widget_state=False,
-        record_timing=False,
-        extra_arguments=["--HistoryManager.enabled=False", "--log-level=ERROR"],
-    )
-
-
-def _failed(notebook: Any, path: Path, error: Any) -> _Outcome:
-    if error.ename == "NeedsSheet":
-        return _Outcome(needs=str(error.evalue).split("needs sheet ", 1)[1].split("\n", 1)[0].strip())
-    cell = next(
-        (cell for cell in notebook.cells if any(output.output_type == "error" for output in cell.get("outputs", ()))),
-        None,
-    )
-    place = f"sheets/{path.name}, cell [{cell.execution_count}]" if cell else f"sheets/{path.name}"
-    source = next((line for line in cell.source.splitlines() if line.strip()), "") if cell else ""
-    return _Outcome(failure=Problem(f"{error.ename}: {error.evalue}", f"in: {source}", "correct the cell", place))
 
 
 def _reads(notebook: Any) -> list[list[str]]:
@@ -340,9 +274,12 @@ def _reads(notebook: Any) -> list[list[str]]:
 
 
 def _source_key(path: Path) -> str:
-    cells = json.loads(path.read_text("utf-8")).get("cells", [])
-    kept = [[cell["cell_type"], "".join(cell["source"])] for cell in cells]
-    return hashlib.sha256(json.dumps(kept).encode()).hexdigest()
+    try:
+        cells = json.loads(path.read_bytes())["cells"]
+        kept = json.dumps([[cell["cell_type"], "".join(cell["source"])] for cell in cells]).encode()
+    except (ValueError, LookupError, TypeError):
+        kept = path.read_bytes()  # no notebook; said when it is to run
+    return hashlib.sha256(kept).hexdigest()
 
 
 def _replace(path: Path, text: str) -> None:

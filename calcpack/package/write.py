@@ -7,12 +7,13 @@ import json
 import os
 import shutil
 from collections.abc import Mapping
+from itertools import chain
 from pathlib import Path
 from typing import Any
 
 from calcpack.errors import Problem, RefusedError, TableError
 
-__all__ = ["manifest", "replace_draft", "write_issue"]
+__all__ = ["clear_remains", "manifest", "replace_draft", "write_issue"]
 
 _RECORD = ("record", "issued")
 
@@ -44,9 +45,16 @@ def replace_draft(root: Path, files: Mapping[str, bytes]) -> Path:
             target.rename(old)
         new.rename(target)
     finally:
+        _put_back(old, target)
         shutil.rmtree(new, ignore_errors=True)
-        shutil.rmtree(old, ignore_errors=True)
     return target
+
+
+def _put_back(old: Path, target: Path) -> None:
+    """Of the last draft and a newer one, keep the newer; the last one where there is no other."""
+    if old.exists() and not target.exists():
+        old.rename(target)
+    shutil.rmtree(old, ignore_errors=True)
 
 
 def write_issue(root: Path, letter: str, files: Mapping[str, bytes]) -> tuple[Path, bool]:
@@ -84,20 +92,29 @@ def write_issue(root: Path, letter: str, files: Mapping[str, bytes]) -> tuple[Pa
 
 
 def clear_remains(root: Path) -> None:
-    """Remove what a run that was cut off left behind."""
-    for path in [*root.glob(".draft.*"), *root.joinpath(*_RECORD).glob(".*")]:
-        if path.is_dir() and not _alive(path.name.rsplit(".", 1)[-1]):
+    """Remove what a run that was cut off left behind; a draft that it had set aside is put back."""
+    kept = root / ".calcpack"
+    folders = [root.glob(".draft.*"), root.joinpath(*_RECORD).glob(".*"), kept.glob("results.*")]
+    for path in [*chain.from_iterable(folders), *kept.glob("layouts.json.*"), *kept.glob("runs/.*")]:
+        process = path.name.rsplit(".", 1)[-1]
+        if not process.isdecimal() or _alive(int(process)):
+            continue
+        if path.name.startswith(".draft.old."):
+            _put_back(path, root / "draft")
+        elif path.is_dir():
             shutil.rmtree(path, ignore_errors=True)
+        else:
+            path.unlink(missing_ok=True)
 
 
-def _alive(process: str) -> bool:
+def _alive(process: int) -> bool:
     try:
-        os.kill(int(process), 0)
-    except (ValueError, ProcessLookupError):
+        os.kill(process, 0)
+    except (OverflowError, ProcessLookupError):
         return False
     except PermissionError:
         return True
-    return int(process) != os.getpid()
+    return process != os.getpid()
 
 
 def _write(folder: Path, files: Mapping[str, bytes]) -> None:
@@ -143,8 +160,17 @@ def _what_differs(name: str, issued: bytes, data: bytes) -> list[str]:
     lines = [f"{identifier} is new" for identifier in after if identifier not in before]
     lines += [f"{identifier} is gone" for identifier in before if identifier not in after]
     lines += [
-        f"{identifier}: {before[identifier]['shown']} issued, {after[identifier]['shown']} now"
+        f"{identifier}: {_moved(before[identifier], after[identifier])}"
         for identifier in after
         if identifier in before and before[identifier]["hash"] != after[identifier]["hash"]
     ]
     return lines or [f"{name} differs"]
+
+
+def _moved(before: Mapping[str, Any], after: Mapping[str, Any]) -> str:
+    """What moved between two states of an entry, as it reads on the page."""
+    for name in ("shown", *after):
+        if name != "hash" and before.get(name) != after[name]:
+            what = "" if name == "shown" else f"{name} "
+            return f"{what}{before.get(name)} issued, {after[name]} now"
+    return f"{after['shown']}, but what it rests on differs"

@@ -160,8 +160,9 @@ def _numerators(node: Node, filled: list[Slot]) -> Node:
         ):
             above.insert(0, factors.pop())
         if above:
-            last = factor[1][1] if factor[1][0] == "mul" else (factor[1],)
-            factor = ("frac", ("mul", (*above, *last)), factor[2])
+            last = factor[1][1] if factor[1][0] == "mul" else (factor[1],) if factor[1] != ("num", "1") else ()
+            product = (*above, *last)
+            factor = ("frac", ("mul", product) if len(product) > 1 else product[0], factor[2])
         factors.append(factor)
     return factors[0] if len(factors) == 1 else ("mul", tuple(factors))
 

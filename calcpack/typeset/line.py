@@ -16,6 +16,7 @@ from calcpack.typeset.layout import Layout
 from calcpack.typeset.rows import Printed
 from calcpack.typeset.store import FormulaLayout
 from calcpack.units import (
+    RATIO,
     US,
     US_FT,
     US_KIP,
@@ -150,6 +151,8 @@ def _print(recorded: Recorded, layouts: FormulaLayout, scope: _Scope) -> Printed
     units = [coherent_unit(scope.dimensions[name], system) for name in names]
     first = [_as_set(scope.shown[name], value, unit) for name, value, unit in zip(names, scaled, units, strict=True)]
     texts, text = honest(evaluate, scaled, result, first)
+    if line.dimension == RATIO and re.fullmatch(r"[0-9]", text):
+        text += ".0"
     fills = {
         name: Printed(with_unit(text, unit), *_link(scope.origins[name]))
         for name, text, unit in zip(names, texts, units, strict=True)
@@ -166,6 +169,7 @@ def _print(recorded: Recorded, layouts: FormulaLayout, scope: _Scope) -> Printed
 
 def _as_set(shown: str, value: float, unit: str) -> str:
     """The number as it is printed where it was set, if it stands there in the same unit."""
+    # The commas of a number, and a unit in trade style, are as `with_unit` made them.
     number, _, shown_unit = shown.partition(" ")
     return number if shown_unit == plain_unit(unit) and _PRINTED.fullmatch(number) else stated_text(value)
 

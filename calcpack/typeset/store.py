@@ -16,7 +16,7 @@ from calcpack.typeset.layout import Layout, lay_out
 
 __all__ = ["FormulaLayout", "LayoutStore"]
 
-_VERSION = 3  # raise it when layouts of the same source change
+_VERSION = 4  # raise it when layouts of the same source change
 
 
 @dataclass(frozen=True)

@@ -10,6 +10,7 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from calcpack.aci318 import columns, ties
+from calcpack.aci318.bars import BARS
 from calcpack.errors import RangeError
 
 
@@ -80,6 +81,86 @@ def test_bars_on_a_circle_are_spaced_along_the_chord() -> None:
     assert columns.bar_spacing_circular(D_s=10.0, n_bars=4, d_b=1.0) == pytest.approx(10 / math.sqrt(2) - 1)
 
 
+def test_spacing_along_either_face_by_hand() -> None:
+    # Hand: (16 - 2 * 1.875 - 3 * 1.128)/2 = 4.433 in; (24 - 3.75 - 5 * 1.128)/4 = 3.6525 in.
+    common = {"c_cover": 1.5, "d_bt": 0.375, "d_b": 1.128}
+    assert columns.bar_spacing_face(b=16.0, n_face=3.0, **common) == pytest.approx(4.433)
+    assert columns.bar_spacing_side(h=24.0, n_face=5.0, **common) == pytest.approx(3.6525)
+
+
+def test_spacing_on_a_circle_by_hand() -> None:
+    # Hand: D_s = 20 - 2 * 2 - 1 = 15 in; eight bars: 15 sin(22.5 deg) = 15 * 0.3826834 = 5.74025 in between centres.
+    D_s = columns.bar_circle(h=20.0, c_cover=1.5, d_bt=0.5, d_b=1.0)
+    assert D_s == 15.0
+    assert columns.bar_pitch_circular(D_s=D_s, n_bars=8.0) == pytest.approx(5.74025, abs=1e-5)
+    assert columns.bar_spacing_circular(D_s=D_s, n_bars=8.0, d_b=1.0) == pytest.approx(4.74025, abs=1e-5)
+
+
+def test_six_bars_on_a_circle_stand_a_radius_apart() -> None:
+    # Geometry: the side of a regular hexagon is the radius of its circle.
+    assert columns.bar_pitch_circular(D_s=15.0, n_bars=6.0) == pytest.approx(7.5)
+
+
+@pytest.mark.parametrize("n_face", [2.0, 3.0, 9.0])
+@pytest.mark.parametrize("width", [10.0, 16.0, 30.0])
+def test_centres_stand_one_diameter_further_apart_than_bars(width: float, n_face: float) -> None:
+    # Geometry; with nine No. 11 in 10 in the bars overlap and the clear spacing is below zero.
+    common = {"c_cover": 1.5, "d_bt": 0.5, "d_b": 1.41, "n_face": n_face}
+    clear, pitch = columns.bar_spacing_face(b=width, **common), columns.bar_pitch_face(b=width, **common)
+    assert pitch == pytest.approx(clear + 1.41)
+    assert columns.bar_spacing_side(h=width, **common) == clear
+    assert columns.bar_pitch_side(h=width, **common) == pitch
+
+
+def test_bars_that_just_touch_have_no_clear_spacing() -> None:
+    # Hand: 2 * (1.5 + 0.375) + 3 * 1 = 6.75 in.
+    assert columns.bar_spacing_face(b=6.75, c_cover=1.5, d_bt=0.375, n_face=3.0, d_b=1.0) == 0.0
+    assert columns.bar_spacing_face(b=6.0, c_cover=1.5, d_bt=0.375, n_face=3.0, d_b=1.0) == -0.375
+
+
+@pytest.mark.parametrize(("b", "h", "least"), [(14.0, 18.0, 14.0), (18.0, 14.0, 14.0), (16.0, 16.0, 16.0)])
+def test_least_dimension(b: float, h: float, least: float) -> None:
+    assert columns.least_dimension_rectangular(b=b, h=h) == least
+    assert columns.least_dimension_circular(h=h) == h
+
+
+@pytest.mark.parametrize(
+    ("f_c", "A_g", "A_st", "f_y", "P_o"),
+    [
+        # Hand, in kip: 0.85 * 4 * (256 - 6.32) + 60 * 6.32; 0.85 * 3 * (144 - 1.76) + 40 * 1.76;
+        # 0.85 * 8 * (576 - 16) + 80 * 16; 0.85 * 12 * (900 - 9) + 75 * 9.
+        (4_000.0, 256.0, 6.32, 60_000.0, 1_228_112.0),
+        (3_000.0, 144.0, 1.76, 40_000.0, 433_112.0),
+        (8_000.0, 576.0, 16.0, 80_000.0, 5_088_000.0),
+        (12_000.0, 900.0, 9.0, 75_000.0, 9_763_200.0),
+    ],
+)
+def test_axial_strength_of_several_columns(f_c: float, A_g: float, A_st: float, f_y: float, P_o: float) -> None:
+    assert columns.axial_strength(f_c=f_c, A_g=A_g, A_st=A_st, f_y=f_y) == pytest.approx(P_o)
+
+
+@pytest.mark.parametrize(
+    ("arguments", "message"),
+    [
+        ({"f_c": 2_499.0}, r"f_c = 2,499 psi +allowed 2,500 psi and up"),
+        ({"f_y": 39_999.0}, r"f_y = 39,999 psi +allowed 40,000 psi"),
+        ({"A_st": 0.0}, r"A_st = 0 in\^2 +has to be an area above zero"),
+        ({"A_g": -1.0}, r"A_g = -1 in\^2 +has to be an area above zero"),
+        ({"f_y": float("nan")}, r"f_y = nan psi"),
+    ],
+)
+def test_range_of_the_axial_strength(arguments: dict[str, float], message: str) -> None:
+    plain = {"f_c": 4_000.0, "A_g": 256.0, "A_st": 8.0, "f_y": 60_000.0}
+    with pytest.raises(RangeError, match=message):
+        columns.axial_strength(**{**plain, **arguments})
+
+
+@pytest.mark.parametrize(("f_c", "f_y"), [(2_500.0, 40_000.0), (2_500.0, 80_000.0)])
+def test_axial_strength_on_the_ends_of_its_range(f_c: float, f_y: float) -> None:
+    found = columns.axial_strength(f_c=f_c, A_g=100.0, A_st=1.0, f_y=f_y)
+    assert found == pytest.approx(0.85 * f_c * 99.0 + f_y)
+
+
 @pytest.mark.parametrize(("d_b", "d_bt_min"), [(1.0, 0.375), (1.27, 0.375), (1.41, 0.5), (2.257, 0.5)])
 def test_tie_size(d_b: float, d_bt_min: float) -> None:
     # ACI 318 25.7.2.2: No. 3 to No. 10 bars, No. 4 above.
@@ -147,3 +228,49 @@ def test_steel_never_weakens_a_column(A_g: float, part: float, f_c: float) -> No
 def test_core_is_inside_the_section(h: float, cover: float) -> None:
     D_c = ties.core_diameter(h=h, c_cover=cover)
     assert ties.core_area(D_c=D_c) < columns.area_circular(h=h)
+
+
+@pytest.mark.parametrize(
+    ("h", "c_cover", "D_c", "A_ch"),
+    # Hand: 20 - 3 = 17 in, pi/4 * 289 = 226.980; 24 - 4 = 20 in, 314.159; 18 - 3 = 15 in, 176.715 in^2.
+    [(20.0, 1.5, 17.0, 226.980), (24.0, 2.0, 20.0, 314.159), (18.0, 1.5, 15.0, 176.715)],
+)
+def test_core_by_hand(h: float, c_cover: float, D_c: float, A_ch: float) -> None:
+    assert ties.core_diameter(h=h, c_cover=c_cover) == D_c
+    assert ties.core_area(D_c=D_c) == pytest.approx(A_ch, abs=1e-3)
+
+
+def test_least_spiral_ratio_by_hand() -> None:
+    # Common practice, 20 in column, 1.5 in cover: 0.45 (400/289 - 1) * 4/60 = 0.011522, and twice with f_c twice.
+    arguments = {"A_g": 314.159, "A_ch": 226.980, "f_yt": 60_000.0}
+    least = ties.spiral_ratio_minimum(**arguments, f_c=4_000.0)
+    assert least == pytest.approx(0.011522, abs=1e-6)
+    assert ties.spiral_ratio_minimum(**arguments, f_c=8_000.0) == pytest.approx(2 * least)
+
+
+@given(d_b=st.sampled_from([bar.d_b for bar in BARS.values()]), h_min=st.floats(8.0, 60.0))
+def test_tie_spacing_is_the_least_of_three(d_b: float, h_min: float) -> None:
+    found = ties.tie_spacing(d_b=d_b, d_bt=0.375, h_min=h_min)
+    assert found in (16 * d_b, 18.0, h_min)
+    assert found <= min(18.0, h_min, 16 * d_b)
+
+
+@given(d_b=st.sampled_from([bar.d_b for bar in BARS.values()]), d_agg=st.floats(0.25, 3.0))
+def test_larger_aggregate_never_brings_bars_closer(d_b: float, d_agg: float) -> None:
+    found = columns.bar_spacing_minimum_aggregate(d_b=d_b, d_agg=d_agg)
+    assert found >= columns.bar_spacing_minimum(d_b=d_b)
+    assert found >= d_agg
+
+
+@given(f_y=st.floats(40_000.0, 100_000.0))
+def test_the_two_axial_formulas_agree_up_to_80_ksi(f_y: float) -> None:
+    one = {"f_c": 5_000.0, "A_g": 400.0, "A_st": 12.0}
+    counted = columns.yield_in_axial_strength(f_y=f_y)
+    high = columns.axial_strength_high_grade(**one, f_y_axial=counted)
+    assert high == columns.axial_strength(**one, f_y=min(f_y, 80_000.0))
+
+
+@given(s=st.floats(1.0, 6.0), closer=st.floats(0.5, 0.99))
+def test_a_closer_pitch_gives_more_spiral(s: float, closer: float) -> None:
+    common = {"A_sp": 0.2, "D_c": 17.0, "d_bt": 0.5}
+    assert ties.spiral_ratio(**common, s=s * closer) > ties.spiral_ratio(**common, s=s)

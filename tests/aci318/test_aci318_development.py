@@ -10,6 +10,7 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from calcpack.aci318 import development as dev
+from calcpack.aci318 import laps
 from calcpack.aci318.bars import BARS
 from calcpack.errors import RangeError
 
@@ -200,3 +201,43 @@ def test_trap_the_table_caps_the_product_too(formula: Any, psi_e: float) -> None
     arguments = {name: known[name] for name in formula.arguments}
     expected = min(1.3 * psi_e, 1.7) * formula(**arguments)
     assert formula(**{**arguments, "psi_t": 1.3, "psi_e": psi_e}) == pytest.approx(expected)
+
+
+# Beside the length
+
+
+def test_centres_of_bars_are_a_diameter_further_apart_than_their_clear_spacing() -> None:
+    assert dev.centre_spacing(s_clear=4.0, d_b=1.128) == pytest.approx(5.128)
+
+
+@pytest.mark.parametrize(("c_c", "d_b", "c_b"), [(1.5, 1.0, 2.0), (2.0, 0.75, 2.375), (0.75, 0.5, 1.0)])
+def test_c_b_by_cover_is_the_definition_with_one_per_cent(c_c: float, d_b: float, c_b: float) -> None:
+    # ACI 318 2.2: cover to the bar centre.
+    assert dev.c_b_by_cover(c_c=c_c, d_b=d_b) == pytest.approx(1.01 * c_b)
+
+
+@pytest.mark.parametrize(("s", "c_b"), [(4.0, 2.0), (6.0, 3.0), (5.25, 2.625)])
+def test_c_b_by_spacing_is_the_definition_with_one_per_cent(s: float, c_b: float) -> None:
+    # ACI 318 2.2: half the centre-to-centre spacing.
+    assert dev.c_b_by_spacing(s=s) == pytest.approx(1.01 * c_b)
+
+
+@pytest.mark.parametrize(("d_b", "least"), [(0.625, 0.3125), (1.0, 0.5), (1.41, 0.705)])
+def test_close_bars_of_high_grade(d_b: float, least: float) -> None:
+    # ACI 318-19 25.4.2.2 and 25.5.1.5, from memory: closer than 6 in, K_tr of 0.5 d_b; not in 318-14.
+    assert dev.close_bars() == 6.0
+    assert dev.transverse_index_minimum(d_b=d_b) == pytest.approx(least)
+    assert laps.lap_transverse_index_minimum(d_b=d_b) == pytest.approx(least)
+    assert laps.lap_close_bars() == 6.0
+    assert [str(clause) for clause in dev.close_bars.clauses] == ["ACI 318-19 25.4.2.2"]
+    assert [str(clause) for clause in laps.lap_close_bars.clauses] == ["ACI 318-19 25.5.1.5"]
+
+
+@given(c_c=st.floats(0.5, 6.0), s_clear=st.floats(0.5, 12.0), d_b=st.sampled_from([0.375, 0.75, 1.0, 1.41]))
+def test_the_smaller_of_the_two_bounds_is_c_b(c_c: float, s_clear: float, d_b: float) -> None:
+    bounds = (
+        dev.c_b_by_cover(c_c=c_c, d_b=d_b),
+        dev.c_b_by_spacing(s=dev.centre_spacing(s_clear=s_clear, d_b=d_b)),
+    )
+    whole = dev.cover_or_spacing(c_c=c_c, s_clear=s_clear, d_b=d_b)
+    assert min(bounds) == pytest.approx(1.01 * whole)

@@ -173,3 +173,39 @@ def test_each_factor_multiplies_the_length(formula: Any, name: str) -> None:
     if name in formula.arguments:
         arguments = {symbol: {**HOOK_19, **HEAD_19}[symbol] for symbol in formula.arguments}
         assert formula(**{**arguments, name: 1.2}) == pytest.approx(1.2 * formula(**arguments))
+
+
+@pytest.mark.parametrize(("d_b", "cover"), [(0.5, 1.0), (1.0, 2.0), (1.41, 2.82)])
+def test_cover_of_heads(d_b: float, cover: float) -> None:
+    # ACI 318 25.4.4.1, both editions, from memory: 2 d_b.
+    assert heads.head_cover_minimum(d_b=d_b) == cover
+    assert [str(clause) for clause in heads.head_cover_minimum.clauses] == [
+        "ACI 318-14 25.4.4.1",
+        "ACI 318-19 25.4.4.1",
+    ]
+
+
+@pytest.mark.parametrize(("d_b", "old", "new"), [(0.5, 2.5, 1.5), (1.0, 5.0, 3.0), (1.41, 7.05, 4.23)])
+def test_spacing_of_heads_by_edition(d_b: float, old: float, new: float) -> None:
+    # ACI 318-14 25.4.4.1: 4 d_b clear, so 5 d_b between centres; 318-19: 3 d_b between centres; from memory.
+    assert heads.head_spacing_14(d_b=d_b) == pytest.approx(old)
+    assert heads.head_spacing_19(d_b=d_b) == pytest.approx(new)
+    assert old - d_b == pytest.approx(4 * d_b)
+
+
+def test_hook_of_318_19_by_hand_with_all_factors() -> None:
+    # Hand: 60000 * 1.2 * 1.6 * 1.25 * 0.9333333/(55 * 70.710678) * 0.875^1.5 = 28.285 in.
+    factors = {"psi_e": 1.2, "psi_r": 1.6, "psi_o": 1.25, "psi_c": 5_000 / 15_000 + 0.6}
+    found = hooks.hook_19(f_y=60_000.0, f_c=5_000.0, lamb=1.0, d_b=0.875, **factors)
+    assert found == pytest.approx(28.285, abs=2e-3)
+
+
+def test_hook_of_318_14_by_hand_with_all_factors() -> None:
+    # Hand: 60000 * 1.2 * 0.7 * 0.8/(50 * 0.75 * 63.245553) * 1.128 = 19.1765 in.
+    found = hooks.hook_14(f_y=60_000.0, f_c=4_000.0, lamb=0.75, psi_e=1.2, psi_c=0.7, psi_r=0.8, d_b=1.128)
+    assert found == pytest.approx(19.1765, abs=1e-4)
+
+
+def test_head_of_318_14_by_hand() -> None:
+    # Hand: 0.016 * 60000 * 1.2/70.710678 * 0.75 = 12.2188 in.
+    assert heads.head_14(f_y=60_000.0, f_c=5_000.0, psi_e=1.2, d_b=0.75) == pytest.approx(12.2188, abs=1e-4)

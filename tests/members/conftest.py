@@ -2,33 +2,66 @@
 
 from __future__ import annotations
 
+from dataclasses import dataclass
 from typing import Any
 
 import pytest
 
 from calcpack.aci318.editions import Edition, edition
 from calcpack.formula import Formula
+from calcpack.ledger import passes
 from calcpack.members.termination import Termination
 
 
-class Steps:
-    """A pad that keeps what was stated, worked and said, in order."""
+@dataclass(frozen=True)
+class Given:
+    """A value as it was stated."""
+
+    symbol: str
+    value: float
+    means: str
+    source: str
+
+
+@dataclass(frozen=True)
+class Verdict:
+    """A comparison as it was made."""
+
+    what: str
+    demand: float
+    capacity: float
+    clause: str
+    ratio: float
+
+    @property
+    def word(self) -> str:
+        """As the ledger has it."""
+        return "OK" if passes(self.ratio) else "NG"
+
+
+class RecordingPad:
+    """A pad that keeps what was stated, worked, said and verified, in order, and refuses what a sheet refuses."""
 
     def __init__(self) -> None:
         self.steps: list[tuple[str, str]] = []
         self.values: dict[str, float] = {}
         self.clauses: list[tuple[str, Formula]] = []
+        self.givens: list[Given] = []
+        self.verdicts: list[Verdict] = []
 
     def given(self, symbol: str, value: float, means: str, source: str) -> float:
-        assert means
-        assert source
+        assert means.strip()
+        assert source.strip()
+        assert isinstance(value, float)
         self.steps.append(("given", symbol))
         self.values[symbol] = value
+        self.givens.append(Given(symbol, value, means, source))
         return value
 
     def work(self, formula: Formula, **values: float) -> float:
         recording = formula.record(**values)
         for recorded in recording.lines:
+            assert isinstance(recorded.value, float)
             self.steps.append(("worked", recorded.line.target))
             self.values[recorded.line.target] = recorded.value
         self.clauses.append((recording.lines[-1].line.target, formula))
@@ -38,16 +71,47 @@ class Steps:
         return value
 
     def reason(self, text: str) -> None:
+        assert text.strip()
         self.steps.append(("reason", text))
+
+    def verify(self, what: str, demand: float, capacity: float, clause: str) -> float:
+        assert capacity > 0
+        assert clause
+        self.steps.append(("verdict", what))
+        self.verdicts.append(Verdict(what, demand, capacity, clause, demand / capacity))
+        return demand / capacity
+
+    def heading(self, text: str) -> None:
+        self.steps.append(("heading", text))
+
+    def told(self, kind: str) -> list[str]:
+        """The steps of one kind, in order."""
+        return [text for step, text in self.steps if step == kind]
 
     @property
     def reasons(self) -> list[str]:
-        return [text for kind, text in self.steps if kind == "reason"]
+        return self.told("reason")
+
+    @property
+    def words(self) -> list[str]:
+        """OK or NG of every comparison."""
+        return [verdict.word for verdict in self.verdicts]
+
+    def source(self, symbol: str) -> str:
+        """The source of a symbol that was stated once."""
+        (found,) = [one.source for one in self.givens if one.symbol == symbol]
+        return found
 
 
 @pytest.fixture
-def steps() -> Steps:
-    return Steps()
+def steps() -> RecordingPad:
+    return RecordingPad()
+
+
+@pytest.fixture
+def recording() -> type[RecordingPad]:
+    """For tests that need a new pad for every example."""
+    return RecordingPad
 
 
 @pytest.fixture(params=["ACI 318-14", "ACI 318-19"])

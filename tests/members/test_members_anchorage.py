@@ -82,7 +82,8 @@ def test_steps_come_in_the_order_of_a_hand_calculation(row: Row, e19: Edition, s
     required_length(steps, row(c_b=2.0), e19)
     symbols = [name for kind, name in steps.steps if kind != "reason"]
     assert symbols == [
-        *["f_y", "f_c", "lamb", "psi_t", "psi_e", "d_b", "psi_s", "psi_g", "c_b", "K_tr"],
+        # Givens first, then factors, then the equation.
+        *["f_y", "f_c", "lamb", "d_b", "c_b", "K_tr", "psi_t", "psi_e", "psi_s", "psi_g"],
         *["psi_te", "confinement", "root_f_c", "l_d_a", "l_d"],
     ]
 
@@ -322,7 +323,7 @@ def test_c_b_that_contradicts_cover_or_spacing_is_not_met(row: Row, each: Editio
     assert check(row(c_b=2.0, clear_cover=1.5, available=90.0), each).verdict == "OK"
     short = check(row(c_b=2.5, clear_cover=1.5, available=90.0), each)
     assert short.verdict == "NG"
-    assert short.notes == ("Not met: c_b = 2.5 in, stated cover and spacing give 2 in (2.2)",)
+    assert short.notes == ("Not met: c_b = 2.5 in, clear cover gives 2 in (2.2)",)
     assert check(row(c_b=2.5, spacing=4.0, available=90.0), each).verdict == "NG"
     # The smaller of 3.5 in and 2 in counts.
     assert check(row(c_b=2.5, clear_cover=3.0, spacing=4.0, available=90.0), each).verdict == "NG"

@@ -189,10 +189,10 @@ def test_a_pressure_of_feet_and_kips(store: LayoutStore) -> None:
     ("h_below", "value", "condition"),
     [
         ("18 in", "1.3", "18 in > 12 in"),
-        ("12 in", "1", "12 in ≤ 12 in"),
-        ("11 in", "1", "11 in ≤ 12 in"),
+        ("12 in", "1.0", "12 in ≤ 12 in"),
+        ("11 in", "1.0", "11 in ≤ 12 in"),
         ("1.5 ft", "1.3", "18 in > 12 in"),
-        ("1 ft", "1", "12 in ≤ 12 in"),
+        ("1 ft", "1.0", "12 in ≤ 12 in"),
         ("12.0004 in", "1.3", "12.0004 in > 12 in"),
         ("12.000049 in", "1.3", "12.000049 in > 12 in"),
         ("4 ft", "1.3", "48 in > 12 in"),
