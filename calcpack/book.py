@@ -2,11 +2,12 @@
 
 from __future__ import annotations
 
+import re
 from collections.abc import Sequence
 from dataclasses import dataclass, field
 from typing import Any
 
-from calcpack import notebook
+from calcpack import notebook, symbols
 from calcpack.ledger import Entry, Ledger
 from calcpack.typeset.line import Origin
 from calcpack.units import Dimension
@@ -64,6 +65,9 @@ class SheetBook:
         for entry in kept:
             renewed.add(entry)
         self.ledger = renewed
+        # An id that is free again may come back in another cell: no cell may still count it as its own.
+        for _, entries in self._cells.values():
+            entries[:] = [entry for entry in entries if entry.id in here]
 
     def _place(self) -> str:
         cell = notebook.cell_name()
@@ -71,6 +75,15 @@ class SheetBook:
 
     def _show(self, kind: str, entries: Sequence[Entry] = (), reads: Sequence[Any] = (), **item: Any) -> None:
         notebook.show({"type": kind, "entries": [entry.to_json() for entry in entries], "reads": list(reads), **item})
+
+    def _named(self, text: str) -> list[dict[str, str]]:
+        """A text in which names of the notation table stand as symbols."""
+        pieces = re.split(r"\b([A-Za-z]+(?:_[A-Za-z0-9]+)+)\b", text)
+        return [
+            {**self._part(piece), "symbol": piece} if index % 2 and symbols.is_known(piece) else self._part(piece)
+            for index, piece in enumerate(pieces)
+            if piece
+        ]
 
     def _part(self, part: str | Value) -> dict[str, str]:
         if isinstance(part, Value):

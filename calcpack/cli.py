@@ -40,8 +40,9 @@ def main(arguments: Sequence[str] | None = None) -> int:
     except KeyboardInterrupt:
         print("stopped; nothing was written", file=sys.stderr)
     except BrokenPipeError:
-        # Whoever read has left; what is still in the buffer must not be tried again when Python ends.
-        sys.stdout = open(os.devnull, "w", encoding="utf-8")  # noqa: SIM115, PTH123
+        # Printing comes last, so the work is done; what is in the buffer must not be tried again when Python ends.
+        os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
+        return NOT_OK
     except OSError as error:
         print(f"cannot read or write {error.filename or 'a file'}: {error.strerror or error}", file=sys.stderr)
     return REFUSED

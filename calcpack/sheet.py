@@ -92,13 +92,9 @@ class Sheet(Scheduled):
         """
         if value is None:
             return self._listed(symbol)
-        known = symbols.lookup(symbol) if symbols.is_known(symbol) else None
-        self._require(symbol, means or (known.meaning if known else ""), source, status)
-        try:
-            measured = read(value, known.dimension if known else None, symbol)
-        except InputError as error:
-            raise error.at(self._place()) from None
-        return self._set_given(symbol, measured, means or (known.meaning if known else ""), source, status, unit)
+        means = means or (symbols.lookup(symbol).meaning if symbols.is_known(symbol) else "")
+        self._require(symbol, means, source, status)
+        return self._set_given(symbol, self._measured(symbol, value, unit), means, source, status, unit)
 
     def work(self, formula: Formula, **values: Value) -> Value:
         """Evaluate a formula and print it, line by line, with its values.
@@ -185,7 +181,7 @@ class Sheet(Scheduled):
 
     def figure(self, figure: Figure, caption: str = "") -> None:
         """A figure, drawn to scale by `calcpack.figures`, or any object with ``svg``, ``caption`` and ``alt``."""
-        if not getattr(figure, "alt", "").strip():
+        if not str(getattr(figure, "alt", None) or "").strip():
             raise SheetError(
                 "figure", [Problem("a figure without alt text", "one sentence of what it shows", "")], self._place()
             )
@@ -220,13 +216,13 @@ class Sheet(Scheduled):
         ------
         SheetError : no method, or nothing that confirms it
         """
-        if not method.strip() or not confirmed_by:
-            problem = Problem(
-                f"{symbol}: method {method!r}, {len(confirmed_by)} confirmations", "a method and at least one", ""
-            )
+        loose = ", ".join(repr(item) for item in confirmed_by if not isinstance(item, Value))
+        if not method.strip() or not confirmed_by or loose:
+            found = f"{symbol}: method {method!r}, confirmed by {loose or len(confirmed_by)}"
+            problem = Problem(found, "a method, and values of the ledger by which a hand confirms it", "")
             raise SheetError("solved value", [problem], self._place())
+        measured = self._measured(symbol, value)
         self._begin()
-        measured = read(value, symbols.lookup(symbol).dimension if symbols.is_known(symbol) else None, symbol)
         identifier, shown = self._free_ids([symbol])[0], shown_text(measured.value, measured.dimension)
         entry = Entry(
             identifier, "solved", symbol, means, measured.value, coherent_unit(measured.dimension), shown, self.id,
@@ -240,6 +236,16 @@ class Sheet(Scheduled):
         return kept
 
     # What follows is how the above is done.
+
+    def _measured(self, symbol: str, value: object, unit: str = "") -> Measured:
+        dimension = symbols.lookup(symbol).dimension if symbols.is_known(symbol) else None
+        try:
+            measured = read(value, dimension, symbol)
+            if unit:
+                read(f"1 {unit}", measured.dimension, f"unit of {symbol}")
+        except InputError as error:
+            raise error.at(self._place()) from None
+        return measured
 
     def _listed(self, symbol: str) -> Value:
         from calcpack.job import row_digest
@@ -277,16 +283,9 @@ class Sheet(Scheduled):
         )  # fmt: skip
         value = self._keep(entry, measured.dimension)
         self._show(
-            "given",
-            [entry],
-            reads,
-            id=identifier,
-            symbol=symbol,
-            means=means,
-            shown=shown,
-            source=source,
+            "given", [entry], reads, id=identifier, symbol=symbol, means=means, shown=shown, source=source,
             status=status,
-        )
+        )  # fmt: skip
         return value
 
     def _require(self, symbol: str, means: str, source: str, status: str) -> None:
@@ -305,6 +304,9 @@ class Sheet(Scheduled):
             raise SheetError("given", problems, self._place())
 
     def _bind(self, formula: Formula, values: Mapping[str, Value]) -> dict[str, Value]:
+        if not isinstance(formula, Formula):
+            problem = Problem(f"{formula!r}", "a formula", "put @formula('where it comes from') above the function")
+            raise SheetError("work", [problem], self._place())
         bound, problems = {}, []
         for name in values:
             if name not in formula.arguments:
@@ -378,7 +380,8 @@ class Sheet(Scheduled):
     def _note(self, style: str, parts: Sequence[str | Value]) -> None:
         if not any(str(part).strip() for part in parts):
             raise SheetError(style, [Problem("an empty text", "a sentence", "")], self._place())
-        self._show("note", style=style, parts=[self._part(part) for part in parts])
+        said = [self._named(part) if isinstance(part, str) else [self._part(part)] for part in parts]
+        self._show("note", style=style, parts=[piece for pieces in said for piece in pieces])
 
 
 def _edition(clause: Clause) -> str:

@@ -10,7 +10,7 @@ from calcpack.errors import Problem, SheetError
 from calcpack.ledger import Entry, passes
 from calcpack.typeset.digits import stated_text
 from calcpack.typeset.line import with_unit
-from calcpack.units import Dimension, convert, display_unit
+from calcpack.units import RATIO, Dimension, convert, display_unit
 
 __all__ = ["Value", "ratio_text", "shown_text"]
 
@@ -50,7 +50,8 @@ class Value:
 def shown_text(value: float, dimension: Dimension, unit: str = "") -> str:
     """A given, from its coherent value, as shown in `unit` or in the display unit of its dimension."""
     unit = unit or display_unit(dimension)
-    return with_unit(stated_text(convert(value, unit)), unit)
+    number = stated_text(convert(value, unit))
+    return with_unit(f"{number}.0" if dimension == RATIO and len(number) == 1 else number, unit)
 
 
 def ratio_text(ratio: float) -> str:

@@ -52,14 +52,14 @@ def centre_spacing(*, s_clear: Length, d_b: Length) -> Length:
 # One per cent above the definition, for dimensions rounded on the drawing.
 @formula(ACI_318_14("2.2"), ACI_318_19("2.2"))
 def c_b_by_cover(*, c_c: Length, d_b: Length) -> Length:
-    """Largest c_b within the clear cover, with one per cent for rounded dimensions."""
+    """Largest distance to the bar centre within the clear cover, with one per cent for rounded dimensions."""
     c_b_max = 1.01 * (c_c + d_b / 2)
     return c_b_max
 
 
 @formula(ACI_318_14("2.2"), ACI_318_19("2.2"))
 def c_b_by_spacing(*, s: Length) -> Length:
-    """Largest c_b within half the bar spacing, with one per cent for rounded dimensions."""
+    """Largest distance to the bar centre within half the bar spacing, with one per cent for rounded dimensions."""
     c_b_max = 1.01 * s / 2
     return c_b_max
 

@@ -114,7 +114,7 @@ def coated_bar(*, c_c: Length, s_clear: Length, d_b: Length) -> Ratio:
 # c_b is the lesser of c_c + d_b/2 and (s_clear + d_b)/2: below 3.5 d_b exactly when one of the two conditions holds.
 @formula(*_STRAIGHT)
 def coated_bar_by_c_b(*, c_b: Length, d_b: Length) -> Ratio:
-    """Coating factor of straight epoxy-coated or dual-coated bars, from c_b where cover and spacing are not stated."""
+    """Coating factor of straight epoxy-coated or dual-coated bars, where cover and spacing are not stated."""
     if c_b < 3.5 * d_b:
         psi_e = 1.5
     else:
@@ -185,7 +185,7 @@ def hook_cover_unknown() -> Ratio:
 
 @formula(_HOOK_14)
 def hook_in_ties(*, d_b: Length) -> Ratio:
-    """Confinement factor of a hook, No. 11 and smaller, in ties or stirrups at 3 d_b or closer."""
+    """Confinement factor of a hook, No. 11 and smaller, in ties or stirrups at three bar diameters or closer."""
     if d_b <= 1.41 * inch:
         psi_r = 0.8
     else:
@@ -212,7 +212,7 @@ def confined_hooks(*, d_b: Length, A_th: Area, A_hs: Area, s: Length) -> Ratio:
 
 @formula(_HOOK_19)
 def ties_at_hooks(*, d_b: Length) -> Ratio:
-    """Confinement factor of hooks where the schedule says that A_th is at least 0.4 A_hs."""
+    """Confinement factor of hooks whose ties are scheduled as 0.4 of the bar area or more."""
     if d_b <= 1.41 * inch:
         psi_r = 1.0
     else:
@@ -290,7 +290,7 @@ def confined_heads(*, d_b: Length, A_tt: Area, A_hs: Area, s: Length) -> Ratio:
 
 @formula(_HEAD_19)
 def ties_at_heads(*, d_b: Length) -> Ratio:
-    """Parallel-tie factor of heads where the schedule says that A_tt is at least 0.3 A_hs."""
+    """Parallel-tie factor of heads whose parallel ties are scheduled as 0.3 of the bar area or more."""
     if d_b <= 1.41 * inch:
         psi_p = 1.0
     else:

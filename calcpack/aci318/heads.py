@@ -14,7 +14,7 @@ __all__ = ["head_14", "head_19", "head_cover_minimum", "head_minimum", "head_spa
 
 @formula(ACI_318_14("25.4.4.2(a)"), empirical=True, limits=(CONCRETE, YIELD_LEAST, YIELD_60, BAR_DIAMETER_TO_NO_11))
 def head_14(*, f_y: Stress, f_c: Stress, psi_e: Ratio, d_b: Length) -> Length:
-    """Development length of a headed bar by the equation, before its minima; f_c counts up to 6,000 psi."""
+    """Development length of a headed bar by the equation, before its minima, concrete counted up to 6,000 psi."""
     root_f_c = sqrt(min(f_c, 6000 * psi))
     l_dt_a = 0.016 * f_y * psi_e / root_f_c * d_b
     return l_dt_a
@@ -30,7 +30,7 @@ def head_19(*, f_y: Stress, f_c: Stress, psi_e: Ratio, psi_p: Ratio, psi_o: Rati
 
 @formula(ACI_318_14("25.4.4.2"), ACI_318_19("25.4.4.2"))
 def head_minimum(*, l_dt_a: Length, d_b: Length) -> Length:
-    """Development length of a headed bar, not less than 8 d_b and 6 in."""
+    """Development length of a headed bar, not less than 8 bar diameters and 6 in."""
     l_dt = max(l_dt_a, 8 * d_b, 6 * inch)
     return l_dt
 
@@ -45,7 +45,7 @@ def head_cover_minimum(*, d_b: Length) -> Length:
 # 318-14 asks for 4 d_b clear; the schedule, and 318-19, measure from centre to centre.
 @formula(ACI_318_14("25.4.4.1"))
 def head_spacing_14(*, d_b: Length) -> Length:
-    """Least centre-to-centre spacing of headed bars, 4 d_b clear."""
+    """Least centre-to-centre spacing of headed bars, 4 bar diameters clear."""
     s_min = 5 * d_b
     return s_min
 

@@ -67,14 +67,14 @@ def hook_19(
 
 @formula(ACI_318_14("25.4.3.1"), ACI_318_19("25.4.3.1"))
 def hook_minimum(*, l_dh_a: Length, d_b: Length) -> Length:
-    """Development length of a standard hook, not less than 8 d_b and 6 in."""
+    """Development length of a standard hook, not less than 8 bar diameters and 6 in."""
     l_dh = max(l_dh_a, 8 * d_b, 6 * inch)
     return l_dh
 
 
 @formula(ACI_318_14("25.4.10.1"))
 def hook_reduced(*, l_dh_a: Length, A_s_required: Area, A_s_provided: Area, d_b: Length) -> Length:
-    """Development length of a standard hook, reduced for excess reinforcement, not less than 8 d_b and 6 in."""
+    """Development length of a standard hook, reduced for excess reinforcement, minima kept."""
     l_dh = max(l_dh_a * A_s_required / A_s_provided, 8 * d_b, 6 * inch)
     return l_dh
 

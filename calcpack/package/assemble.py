@@ -194,7 +194,7 @@ def _documents(ledger: Iterable[Entry]) -> list[dict[str, Any]]:
     """Documents that givens name as their source: what stands before the first comma."""
     found: dict[str, dict[str, None]] = {}
     for entry in ledger:
-        if entry.kind == "given":
+        if entry.kind == "given" and "default of the schedule" not in entry.source:
             found.setdefault(entry.source.split(",")[0].strip(), {})[entry.sheet] = None
     return [{"name": name, "sheets": list(sheets)} for name, sheets in sorted(found.items())]
 
@@ -212,7 +212,7 @@ def _validation() -> dict[str, Any]:
 def _validated(group: Sequence[Any]) -> dict[str, Any]:
     """One published case: how many of its values are checked, and the one that uses most of its tolerance."""
     worst = max(group, key=lambda case: abs(case.deviation) / case.tolerance if case.tolerance else abs(case.deviation))
-    count = f"{len(group)} values; largest: {worst.quantity}" if len(group) > 1 else worst.quantity
+    count = f"{len(group)} values, shown: {worst.quantity}" if len(group) > 1 else worst.quantity
     return {
         "id": worst.id,
         "what": count,
@@ -229,5 +229,6 @@ def _validated(group: Sequence[Any]) -> dict[str, Any]:
 
 def _without_addresses(source: str) -> str:
     """A source without web addresses: the printed record names it, the data hold the rest."""
-    parts = [part.strip() for part in re.split(r"[;,]\s*(?=\S*\w\.\w\S*/|https?:|\w+\.(?:com|gov|org)\b)", source)]
-    return parts[0].removesuffix(".")
+    return re.split(
+        r"[;,]?\s+(?:as (?:found|transcribed) at\s+)?\(?(?:https?:|\w+(?:[.-]\w+)*\.(?:com|gov|org)\b)", source
+    )[0].strip(" .,;")

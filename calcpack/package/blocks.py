@@ -140,7 +140,11 @@ class Printer:
     def part(self, part: Mapping[str, Any]) -> Block:
         """A piece of a sentence or a cell, with the link it carries."""
         shown = self.text(part["text"])
+        symbol = self.symbol(part["symbol"]) if part.get("symbol") else {"math": Markup(""), "spoken": ""}
+        math = Markup(f"${symbol['math']}$") if self.target == "typst" and symbol["math"] else symbol["math"]
         return {
+            "math": math or "",
+            "spoken": symbol["spoken"],
             # A value keeps its unit on its line.
             "text": shown.replace(" ", "\u00a0") if part.get("link") else shown,
             "link": self.link(part.get("link", "")),

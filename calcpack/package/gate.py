@@ -9,6 +9,7 @@ from dataclasses import dataclass
 from calcpack.job import Job
 from calcpack.package.collect import Content, SheetContent
 from calcpack.package.members import JobChecks
+from calcpack.units import plain_unit
 
 __all__ = ["Open", "is_final", "open_items"]
 
@@ -54,7 +55,7 @@ def _assumed(job: Job, content: Content | None) -> Iterator[Open]:
     listed = {row.symbol for row in job.givens if row.status == "assumed"}
     for row in job.givens:
         if row.symbol in listed:
-            yield Open("assumed", f"{row.means} = {row.text}", "inputs/givens.toml")
+            yield Open("assumed", f"{row.means} = {plain_unit(row.text)}", "inputs/givens.toml")
     for entry in content.ledger if content else ():
         if entry.kind == "given" and entry.status == "assumed" and entry.symbol not in listed:
             yield Open("assumed", f"{entry.means} = {entry.shown}", f"sheet {entry.sheet}")

@@ -12,7 +12,7 @@ from calcpack import expression
 from calcpack.formula import Formula, Recorded, Recording
 from calcpack.formula_source import UNIT_CONSTANTS, Line, opposite, without_units
 from calcpack.typeset.digits import constant_text, honest, number_text, stated_text
-from calcpack.typeset.layout import Layout
+from calcpack.typeset.layout import Layout, Slot
 from calcpack.typeset.rows import Printed
 from calcpack.typeset.store import FormulaLayout
 from calcpack.units import (
@@ -160,11 +160,17 @@ def _print(recorded: Recorded, layouts: FormulaLayout, scope: _Scope) -> Printed
     conditions = tuple(
         (layout, _fill(layout, fills)) for layout in (layouts.conditions[ast.unparse(test)] for test in tests)
     )
-    layout = layouts.lines[line.index]
+    layout = _as_stated(layouts.lines[line.index], text)
     line_result = with_unit(text, line_unit)
     return PrintedLine(
         line.target, layout, _fill(layout, fills), conditions, line_result, _shown(recorded, system, line_result)
     )
+
+
+def _as_stated(layout: Layout, text: str) -> Layout:
+    """A line that sets a plain ratio prints it as the result is printed: 1.0, not 1."""
+    plain = layout.tree == ("slot", 0) and layout.slots[0].kind == "number" and text.endswith(".0")
+    return Layout(layout.tree, (Slot("printed", text),)) if plain else layout
 
 
 def _as_set(shown: str, value: float, unit: str) -> str:

@@ -41,6 +41,8 @@ def _symbol_node(kind: str, text: str, unit: str) -> Node:
         return name_tree(text)
     if kind == "const":
         return ("sym", "π", "", 0)
+    if kind == "printed":
+        return ("num", text)
     number = _constant(text)
     return ("value", f"{number} {unit}", "", "") if unit else ("num", number)
 
