@@ -8,14 +8,14 @@ from __future__ import annotations
 
 import html
 import re
-from collections.abc import Mapping, Sequence
+from collections.abc import Iterator, Mapping, Sequence
 from typing import Any
 
 from calcpack.typeset.emit import LATEX, PLAIN, Target
 from calcpack.typeset.line import PrintedLine
 from calcpack.typeset.rows import condition_row, equation, symbol_text
 
-__all__ = ["MIME", "bundle", "markdown", "plain"]
+__all__ = ["MIME", "bundle", "markdown", "plain", "stored_items"]
 
 MIME = "application/vnd.calcpack.item+json"
 
@@ -29,6 +29,14 @@ def bundle(item: Item) -> dict[str, Any]:
         shown["image/svg+xml"] = item["svg"]
         del shown["text/markdown"]
     return shown
+
+
+def stored_items(notebook: Mapping[str, Any]) -> Iterator[dict[str, Any]]:
+    """Every item in the outputs of a notebook, in order."""
+    for cell in notebook["cells"]:
+        for output in cell.get("outputs", ()):
+            if MIME in output.get("data", {}):
+                yield output["data"][MIME]
 
 
 def markdown(item: Item) -> str:

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import os
+import re
 import sys
 from collections.abc import Mapping
 from pathlib import Path
@@ -55,6 +56,8 @@ def _show_error(running: Any, kind: type[BaseException], error: BaseException, *
 
 
 _watched: set[str] = set()
+# What the tool writes, hidden folders, and Python's own files.
+_FOREIGN = re.compile(r"draft/|record/|(.*/)?(\.|__pycache__/|site-packages/)")
 
 
 def watch_files(root: Path) -> None:
@@ -63,16 +66,23 @@ def watch_files(root: Path) -> None:
     if not target or str(root) in _watched:
         return
     _watched.add(str(root))
-    prefixes = tuple(str(root / folder) + os.sep for folder in ("inputs", "figures"))
+    prefix = str(root) + os.sep
+
+    def note(opened: Any) -> None:
+        path = os.path.abspath(opened)  # noqa: PTH100 - pathlib is too slow for every open of a process
+        name = path[len(prefix) :].replace(os.sep, "/")
+        if path.startswith(prefix) and not _FOREIGN.match(name) and not _quiet:
+            with Path(target).open("a", encoding="utf-8") as notes:
+                notes.write(name + "\n")
 
     def hook(event: str, arguments: tuple[Any, ...]) -> None:
-        if event != "open" or not isinstance(arguments[0], (str, os.PathLike)):
-            return
-        path = os.path.abspath(arguments[0])  # noqa: PTH100 - pathlib is too slow for every open of a process
-        if path.startswith(prefixes) and not _quiet:
-            with Path(target).open("a", encoding="utf-8") as notes:
-                notes.write(path[len(str(root)) + 1 :].replace(os.sep, "/") + "\n")
+        if event == "open" and isinstance(arguments[0], (str, os.PathLike)):
+            note(arguments[0])
 
+    # Modules of the job's own, imported before the sheet was made.
+    for module in list(sys.modules.values()):
+        if file := getattr(module, "__file__", None):
+            note(file)
     sys.addaudithook(hook)
 
 

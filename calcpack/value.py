@@ -43,8 +43,9 @@ class Value:
             notebook.cell_name(),
         )
 
-    __add__ = __radd__ = __sub__ = __rsub__ = __mul__ = __rmul__ = __truediv__ = __rtruediv__ = __pow__ = _refuse
-    __neg__ = __lt__ = __le__ = __gt__ = __ge__ = _refuse
+    __add__ = __radd__ = __sub__ = __rsub__ = __mul__ = __rmul__ = __truediv__ = __rtruediv__ = _refuse
+    __pow__ = __rpow__ = __floordiv__ = __rfloordiv__ = __mod__ = __rmod__ = _refuse
+    __neg__ = __pos__ = __abs__ = __round__ = __lt__ = __le__ = __gt__ = __ge__ = _refuse
 
 
 def shown_text(value: float, dimension: Dimension, unit: str = "") -> str:

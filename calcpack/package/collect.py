@@ -7,8 +7,9 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 from typing import Any
 
+from calcpack.items import stored_items
 from calcpack.ledger import Entry, Ledger
-from calcpack.package.run import Executed, items_of
+from calcpack.package.run import Executed
 
 __all__ = ["Content", "SheetContent", "collect"]
 
@@ -58,7 +59,7 @@ def collect(executed: Sequence[Executed]) -> Content:
     sheets, entries = [], []
     for run in executed:
         subject = ""
-        for _, item in items_of(run.notebook):
+        for item in stored_items(run.notebook):
             if item["type"] == "sheet":
                 subject = item["subject"]
             entries += [Entry.from_json(data) for data in item["entries"]]

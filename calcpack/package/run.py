@@ -12,7 +12,7 @@ import hashlib
 import json
 import os
 import shutil
-from collections.abc import Callable, Iterator, Sequence
+from collections.abc import Callable, Sequence
 from concurrent.futures import FIRST_COMPLETED, Future, ThreadPoolExecutor, wait
 from dataclasses import dataclass, field
 from pathlib import Path
@@ -20,14 +20,14 @@ from typing import Any
 
 from calcpack.carrying import leave, results_folder
 from calcpack.errors import LedgerError, Problem, SheetError
-from calcpack.items import MIME
+from calcpack.items import stored_items
 from calcpack.job import Job
 from calcpack.ledger import Entry, Ledger
 from calcpack.package.execute import Outcome, execute
 from calcpack.package.reads import Inputs, file_digest
 from calcpack.package.release import release_key
 
-__all__ = ["Executed", "items_of", "run_sheets", "sheet_id"]
+__all__ = ["Executed", "run_sheets", "sheet_id"]
 
 _WORKERS = 2
 
@@ -53,17 +53,9 @@ class Executed:
         return sheet_id(self.notebook)
 
 
-def items_of(notebook: Any) -> Iterator[tuple[int, dict[str, Any]]]:
-    """Every item of an executed notebook with the number of its cell, in order."""
-    for index, cell in enumerate(notebook["cells"]):
-        for output in cell.get("outputs", ()):
-            if MIME in output.get("data", {}):
-                yield index, output["data"][MIME]
-
-
 def sheet_id(notebook: Any) -> str:
     """The id of the sheet a notebook makes; empty where it makes none."""
-    return next((str(item["id"]) for _, item in items_of(notebook) if item["type"] == "sheet"), "")
+    return next((str(item["id"]) for item in stored_items(notebook) if item["type"] == "sheet"), "")
 
 
 def run_sheets(job: Job, progress: Callable[[str], None] = lambda _: None) -> list[Executed]:
@@ -204,7 +196,7 @@ class _Run:
             self.failures.append(outcome.failure)
             self.progress(f"failed  {path.name}")
             return ""
-        made = [item["id"] for _, item in items_of(outcome.notebook) if item["type"] == "sheet"]
+        made = [item["id"] for item in stored_items(outcome.notebook) if item["type"] == "sheet"]
         if len(made) != 1:
             found = f"{len(made)} sheets: {', '.join(made)}" if made else "no sheet"
             problem = Problem(found, "one Sheet(id, subject) in each notebook", "sheet = Sheet('C-01', '…')", name)
@@ -235,7 +227,7 @@ class _Run:
             self.failures.append(problem)
         self.done[path] = executed
         ledger, entries = Ledger(), []
-        for _, item in items_of(node):
+        for item in stored_items(node):
             for key, digest in item.get("reads", ()):
                 if key.startswith("sheet "):
                     ledger.admit(key.split(" ", 2)[2], digest)
@@ -270,7 +262,7 @@ _LATER = "later"
 
 
 def _reads(notebook: Any) -> list[list[str]]:
-    return [list(read) for _, item in items_of(notebook) for read in item.get("reads", ())]
+    return [list(read) for item in stored_items(notebook) for read in item.get("reads", ())]
 
 
 def _source_key(path: Path) -> str:
