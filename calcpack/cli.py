@@ -12,7 +12,8 @@ import os
 import sys
 from collections.abc import Callable, Sequence
 from pathlib import Path
-from typing import TYPE_CHECKING, TextIO
+from types import ModuleType
+from typing import TYPE_CHECKING, TextIO, cast
 
 from calcpack.errors import CalcpackError
 
@@ -30,6 +31,8 @@ def main(arguments: Sequence[str] | None = None) -> int:
     for stream in (sys.stdout, sys.stderr):
         if hasattr(stream, "reconfigure"):
             stream.reconfigure(encoding="utf-8", errors="replace")
+    # A URI checker that notebooks do not need compiles its grammars for over a second when jsonschema finds it.
+    sys.modules.setdefault("rfc3987_syntax", cast(ModuleType, None))
     options = _parser().parse_args(arguments)
     try:
         status = int(options.run(options))

@@ -141,4 +141,8 @@ def _latex_text(text: str) -> str:
 
 
 def _escape(text: str) -> str:
-    return re.sub(r"([\\`*_{}\[\]()#+.!|$~^-])", r"\\\1", html.escape(str(text), quote=False)).replace("\n", " ")
+    # One line without space at its start: neither can begin a list, a heading or a block of code.
+    line = " ".join(html.escape(str(text), quote=False).split())
+    line = re.sub(r"([\\`*_{}\[\]()#+.!|$~^-])", r"\\\1", line)
+    # JupyterLab looks for mathematics again in the finished page, where no escape is left; never across elements.
+    return re.sub(r"(\\[\\$])", r"<span>\1</span>", line)

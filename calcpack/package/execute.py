@@ -70,7 +70,7 @@ def _environment(results: Path, scratch: str) -> dict[str, str]:
         **{name: value for name, value in os.environ.items() if name != "PYTHONSTARTUP"},
         "CALCPACK_RESULTS": str(results),
         "IPYTHONDIR": f"{scratch}/ipython",
-        "MPLCONFIGDIR": f"{scratch}/matplotlib",
+        "MPLCONFIGDIR": str(results.with_name("matplotlib")),
         "PYTHONHASHSEED": "0",
         "PYTHONDONTWRITEBYTECODE": "1",
     }
