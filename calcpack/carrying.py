@@ -62,7 +62,10 @@ def _left(root: Path, sheet: str) -> list[dict[str, Any]] | None:
 
 def _stored(root: Path, sheet: str) -> list[dict[str, Any]] | None:
     for path in sorted((root / "sheets").glob("*.ipynb")):
-        items = list(stored_items(json.loads(path.read_text("utf-8"))))
+        try:
+            items = list(stored_items(json.loads(path.read_bytes())))
+        except (ValueError, LookupError, TypeError, AttributeError):
+            continue  # no notebook, or one that is being saved
         if any(item["type"] == "sheet" and item["id"] == sheet for item in items):
             return _hashed(items)
     return None

@@ -2,11 +2,13 @@
 
 from __future__ import annotations
 
+import linecache
 import os
 import re
 import sys
 from collections.abc import Mapping
 from pathlib import Path
+from types import TracebackType
 from typing import Any
 
 from calcpack.errors import CalcpackError
@@ -32,7 +34,7 @@ def show(item: Mapping[str, Any]) -> None:
 def cell_name() -> str:
     """The running cell as a reader counts it, ``cell [7]``; empty in a plain script."""
     running = shell()
-    return f"cell [{running.execution_count}]" if running is not None else ""
+    return f"cell [{_count(running)}]" if running is not None else ""
 
 
 def cell_key() -> tuple[str, int]:
@@ -41,7 +43,13 @@ def cell_key() -> tuple[str, int]:
     if running is None:
         return "", 0
     header = getattr(running, "parent_header", None) or {}
-    return str(header.get("metadata", {}).get("cellId", "")), int(running.execution_count)
+    return str(header.get("metadata", {}).get("cellId", "")), _count(running)
+
+
+def _count(running: Any) -> int:
+    # IPython counts on before the cell runs or after it, by its version; its list of inputs ends with the running one.
+    inputs = getattr(running, "user_ns", {}).get("In", ())
+    return len(inputs) - 1 if len(inputs) > 1 else int(running.execution_count)
 
 
 def short_errors() -> None:
@@ -51,8 +59,20 @@ def short_errors() -> None:
         running.set_custom_exc((CalcpackError,), _show_error)
 
 
-def _show_error(running: Any, kind: type[BaseException], error: BaseException, *_: Any) -> None:
-    running._showtraceback(kind, error, [f"{kind.__name__}: {error}"])
+def _show_error(
+    running: Any, kind: type[BaseException], error: BaseException, trace: TracebackType | None, **_: Any
+) -> None:
+    running._showtraceback(kind, error, [*filter(None, (f"{kind.__name__}: {error}", _cell_line(trace)))])
+
+
+def _cell_line(trace: TracebackType | None) -> str:
+    """The line of the cell that led to an error; empty where it cannot be told."""
+    while trace is not None:
+        name = trace.tb_frame.f_code.co_filename
+        if "ipykernel_" in name or name.startswith("<ipython-input"):
+            return f"in line {trace.tb_lineno}: {linecache.getline(name, trace.tb_lineno).strip()}"
+        trace = trace.tb_next
+    return ""
 
 
 _watched: set[str] = set()

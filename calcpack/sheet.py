@@ -317,7 +317,7 @@ class Sheet(Scheduled):
             found = [values[name]] if name in values else list(self.values(name))[-1:]
             if not found:
                 problems.append(
-                    Problem(f"{name} is missing", f"a {dimension.name}", f"sheet.given({name!r}, …), or pass {name}=…")
+                    Problem(f"{name} is missing", dimension.phrase, f"sheet.given({name!r}, …), or pass {name}=…")
                 )
             elif not isinstance(found[0], Value):
                 problems.append(
@@ -326,7 +326,7 @@ class Sheet(Scheduled):
                     )
                 )
             elif found[0].dimension.powers != dimension.powers:
-                problems.append(Problem(f"{name} = {found[0].entry.shown}", f"a {dimension.name}", ""))
+                problems.append(Problem(f"{name} = {found[0].entry.shown}", dimension.phrase, ""))
             elif name not in values and len(self.values(name)) > 1:
                 problems.append(
                     Problem(f"{name} is set {len(self.values(name))} times on this sheet", "one", f"pass {name}=…")
@@ -391,4 +391,5 @@ def _edition(clause: Clause) -> str:
 def _meaning(symbol: str, formula: Formula) -> str:
     if symbols.is_known(symbol):
         return symbols.lookup(symbol).meaning
-    return (formula.__doc__ or formula.name).strip().splitlines()[0].rstrip(".")
+    title = (formula.__doc__ or formula.name).strip().splitlines()[0].rstrip(".")
+    return title if symbol == formula.result_name else f"step of: {title}"

@@ -153,6 +153,7 @@ _ROWS: tuple[tuple[str, str, Dimension, str, str], ...] = (
     ("P_u", "P_u", FORCE, "factored axial force, compression positive", "any"),
     ("P_D", "P_D", FORCE, "axial force, dead load", "any"),
     ("P_L", "P_L", FORCE, "axial force, live load", "any"),
+    ("P_Lr", "P_{Lr}", FORCE, "axial force, roof live load", "any"),
     ("M_u", "M_u", MOMENT, "factored moment", "any"),
     ("M_n", "M_n", MOMENT, "nominal flexural strength", "any"),
     ("V_u", "V_u", FORCE, "factored shear force", "any"),

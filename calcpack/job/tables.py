@@ -183,7 +183,10 @@ def _number(cell: str, heading: Heading) -> float:
     if match is None or match.end() < len(cell):
         unit = match and cell[match.end() :].strip()[:1].isalpha()
         raise ValueError("the unit stands in the header, the cell holds the number alone" if unit else "enter a number")
-    value = float(cell.replace(",", "")) * heading.size
+    value = float(cell.replace(",", ""))
+    if heading.size != 1:
+        # 50.8 mm are 2 in and not 1.9999999999999998 in, which a clause that asks for 2 in would refuse.
+        value = float(f"{value * heading.size:.14g}")
     if not math.isfinite(value):
         raise ValueError("enter a finite number")
     above, least = heading.column.above, heading.column.least

@@ -100,6 +100,15 @@ STRAIGHT_RULES: Mapping[str, Rule] = {
 # Hooks
 
 
+def _spacing_known(row: TerminationLike) -> bool:
+    return row.spacing is not None or row.clear_spacing is not None
+
+
+def _centre_spacing(row: TerminationLike, _edition: Edition) -> Choice | None:
+    by_clear = row.spacing is None and row.clear_spacing is not None
+    return Choice(development.centre_spacing) if by_clear else None
+
+
 def _hook_length(row: TerminationLike, edition: Edition) -> Choice:
     if row.A_s_required is not None and edition.hook_reduced is not None:
         return Choice(edition.hook_reduced, _EXCESS)
@@ -130,7 +139,7 @@ def _hook_psi_r(row: TerminationLike, edition: Edition) -> Choice:
         return Choice(factors.hook_without_ties, "No such ties scheduled.")
     if row.confining_ties:
         return Choice(factors.ties_at_hooks, "Ties of 0.4 A_hs or more, as scheduled.")
-    if row.spacing is not None:
+    if _spacing_known(row):
         return Choice(factors.spaced_hooks, "No confining ties scheduled.")
     return Choice(factors.unconfined, "No confining ties scheduled, spacing of the hooks not stated.")
 
@@ -155,6 +164,7 @@ HOOK_RULES: Mapping[str, Rule] = {
     "psi_c": _hook_psi_c,
     "psi_r": _hook_psi_r,
     "psi_o": _hook_location,
+    "s": _centre_spacing,
 }
 
 
@@ -172,7 +182,7 @@ def _head_equation(_row: TerminationLike, edition: Edition) -> Choice:
 def _parallel_ties(row: TerminationLike, _edition: Edition) -> Choice:
     if row.confining_ties:
         return Choice(factors.ties_at_heads, "Parallel ties of 0.3 A_hs or more, as scheduled.")
-    if row.spacing is not None:
+    if _spacing_known(row):
         return Choice(factors.spaced_heads, "No parallel ties scheduled.")
     return Choice(factors.unconfined_heads, "No parallel ties scheduled, spacing of the heads not stated.")
 
@@ -201,6 +211,7 @@ HEAD_RULES: Mapping[str, Rule] = {
     "psi_p": _parallel_ties,
     "psi_o": _head_location,
     "psi_c": _head_strength,
+    "s": _centre_spacing,
 }
 
 

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import json
 import os
+import re
 import tempfile
 from dataclasses import dataclass
 from pathlib import Path
@@ -113,7 +114,9 @@ def _failed(notebook: Any, path: Path, error: Any) -> Outcome:
     )
     place = f"sheets/{path.name}, cell [{cell.execution_count}]" if cell else f"sheets/{path.name}"
     source = next((line for line in cell.source.splitlines() if line.strip()), "") if cell else ""
-    return Outcome(failure=Problem(f"{error.ename}: {error.evalue}", f"in: {source}", "correct the cell", place))
+    told = re.search(r"in line \d+: (.*)", str(error.traceback))
+    message = f"{error.ename}: {error.evalue}".replace("\n", "\n      ")
+    return Outcome(failure=Problem(f"{place}: {told[1] if told else source}", f"\n      {message}"))
 
 
 def _notebook(path: Path) -> Any:

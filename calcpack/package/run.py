@@ -134,7 +134,9 @@ class _Run:
         if todo and not self.failures:
             raise self.circular(todo)
         if self.failures:
-            raise SheetError(f"{len(self.failures)} of {len(self.paths)} notebooks failed", self.failures)
+            raise SheetError(
+                f"{len(self.failures)} of {len(self.paths)} notebooks failed", sorted(self.failures, key=str)
+            )
 
     def progressed(self, todo: Sequence[Path]) -> bool:
         """Whether anything moved since the last look; without that, what is left waits for itself."""
