@@ -91,7 +91,7 @@ class Scheduled(SheetBook):
         self._begin()
         listed = [(f"{table} {row.mark}", [row]) for row in rows] + list(more)
         reads = [[key, "".join(row_digest(row) for row in found)] for key, found in listed]
-        self._show("heading", reads=reads, text=text)
+        self._show("heading", reads=reads, text=text, level=2)
 
 
 @dataclass(frozen=True)
@@ -126,5 +126,5 @@ class SheetPad:
         return float(self.sheet.verify(what, demand=demand, capacity=capacity, clause=clause))
 
     def heading(self, text: str) -> None:
-        """A heading of the sheet."""
-        self.sheet.heading(text)
+        """A heading below that of the member."""
+        self.sheet.heading(text, 3)

@@ -165,9 +165,11 @@ class Sheet(Scheduled):
         """The conclusion of the sheet, printed as such."""
         self._note("conclusion", parts)
 
-    def heading(self, text: str) -> None:
-        """A heading inside the sheet."""
-        self._show("heading", text=text)
+    def heading(self, text: str, level: int = 2) -> None:
+        """A heading inside the sheet; one of level 3 stands below one of level 2 and is left out of the contents."""
+        if level not in (2, 3):
+            raise SheetError("heading", [Problem(f"level {level}", "2, or 3 below it", "")], self._place())
+        self._show("heading", text=text, level=level)
 
     def table(self, head: Sequence[str], rows: Sequence[Sequence[str | Value]], caption: str = "") -> None:
         """A table of texts and values; values link to where they were set."""

@@ -201,7 +201,7 @@ class _Maker:
 
     def item(self, item: Mapping[str, Any]) -> None:
         if item["type"] == "heading":
-            self._heading(item["text"], 2)
+            self._heading(item["text"], int(item.get("level", 2)))
             return
         makers = {
             "sheet": self._sheet, "given": self._given, "work": self._work, "verdict": self._verdict,

@@ -9,8 +9,9 @@ from datetime import UTC, datetime
 from pathlib import Path
 from typing import Any
 
-from calcpack.errors import Problem, RefusedError, TableError
+from calcpack.errors import LedgerError, Problem, RefusedError, TableError
 from calcpack.job import Job
+from calcpack.ledger import replay
 from calcpack.package.assemble import assemble, ledger_bytes
 from calcpack.package.collect import Content, collect
 from calcpack.package.gate import Open, is_final, open_items
@@ -73,6 +74,7 @@ def build(job: Job, state: str, progress: Progress = lambda _: None) -> Built:
     clock.lap("schedules")
     content = collect(run_sheets(job, progress))
     clock.lap("notebooks")
+    _replayed(content)
     found = open_items(job, content, checks)
     if state == "issue":
         state = _gated(job, found)
@@ -134,6 +136,14 @@ def _gated(job: Job, found: Sequence[Open]) -> str:
             "settle them, or issue under a preliminary purpose such as 'Plan review'"
         )
     return "final"
+
+
+def _replayed(content: Content) -> None:
+    """Work every printed line again from the ledger alone; a package that does not replay is not made."""
+    wrong = [line for line in replay(content.ledger.to_json()) if not line.agrees]
+    if wrong:
+        lines = "\n".join(f"  {line.id}: states {line.stated!r}, {line.what} gives {line.replayed!r}" for line in wrong)
+        raise LedgerError(f"{len(wrong)} lines do not replay from the ledger:\n{lines}")
 
 
 def _html(model: dict[str, Any], notebooks: Sequence[Any]) -> bytes:

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import asyncio
 import json
 import os
 import re
@@ -53,7 +54,8 @@ def execute(results: Path, path: Path) -> Outcome:
         opened = Path(scratch) / "opened"
         environment = {**_environment(results, scratch), "CALCPACK_OPENED": str(opened)}
         try:
-            _client(notebook, path, Path(scratch)).execute(env=environment)
+            # A loop of its own, closed whatever comes: a kernel that dies leaves tasks waiting for it.
+            asyncio.run(_client(notebook, path, Path(scratch)).async_execute(env=environment))
         except CellExecutionError as error:
             return _failed(notebook, path, error)
         except DeadKernelError:
