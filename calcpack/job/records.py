@@ -73,7 +73,7 @@ class ColumnRow(_Placed):
     cover: float
     f_c: float
     f_y: float
-    f_yt: float
+    f_yt: float | None
     l_u: float | None
     k_x: float
     k_y: float

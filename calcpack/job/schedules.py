@@ -162,8 +162,7 @@ def read_columns(job_root: Path) -> tuple[ColumnRow, ...]:
 
 def _column(row: Row, table: Table) -> ColumnRow:
     ties: Transverse = row.values["ties"]
-    f_yt = row.values["f_yt"] if row.filled("f_yt") else row.values["f_y"]
-    return _record(ColumnRow, row, ties=replace(ties, spacing=ties.spacing * table.sizes["cover"]), f_yt=f_yt)
+    return _record(ColumnRow, row, ties=replace(ties, spacing=ties.spacing * table.sizes["cover"]))
 
 
 def _column_rule(table: Table) -> Iterator[Problem]:

@@ -130,11 +130,11 @@ class _ColumnRules:
         return self.nominal(symbol)
 
     def yield_of_spiral(self) -> Stated:
-        """f_yt; where it is f_y the schedule may have left it out, and is not cited."""
+        """f_yt, or f_y where the schedule leaves it out."""
         means = "specified yield strength of spiral"
-        if self.column.f_yt in (None, self.column.f_y):
+        if self.column.f_yt is None:
             return Stated(self.column.f_y, means, "taken as f_y, default of the schedule")
-        return Stated(self.column.f_yt or 0.0, means, self.source)
+        return Stated(self.column.f_yt, means, self.source)
 
     def nominal(self, symbol: str) -> Stated:
         """A nominal dimension of the bars or of the ties."""

@@ -89,7 +89,7 @@ def _spiral_ratio(work: ColumnWorking[T]) -> CheckResult:
     clause = work.clause(ties.spiral_ratio_minimum)
     notes = [CENTRE_LINE]
     rho_s = work.value("rho_s")
-    if work.column.f_yt in (None, work.column.f_y):
+    if work.column.f_yt is None:
         notes += work.note(NO_F_YT)
     least = work.value("rho_s_min")
     ratio = work.verify("volume ratio of spiral", least, rho_s, clause)

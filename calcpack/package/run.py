@@ -132,7 +132,7 @@ class _Run:
                         self.waiting[path] = needed
                         todo.append(path)
         if todo and not self.failures:
-            raise self.circular(todo)
+            raise self.circular(sorted(todo))
         if self.failures:
             raise SheetError(
                 f"{len(self.failures)} of {len(self.paths)} notebooks failed", sorted(self.failures, key=str)
@@ -179,9 +179,10 @@ class _Run:
     def kept(self, path: Path) -> dict[str, Any] | None:
         if path not in self.records:
             try:
-                self.records[path] = dict(json.loads((self.cache / f"{path.stem}.json").read_text("utf-8")))
+                record = json.loads((self.cache / f"{path.stem}.json").read_text("utf-8"))
             except (OSError, ValueError):
-                self.records[path] = None
+                record = None
+            self.records[path] = record if isinstance(record, dict) and set(_RECORD) <= set(record) else None
         return self.records[path]
 
     def finish(self, path: Path, outcome: Outcome) -> str:
@@ -261,6 +262,7 @@ class _Run:
 
 
 _LATER = "later"
+_RECORD = ("source", "release", "sheet", "reads", "opened", "notebook")
 
 
 def _reads(notebook: Any) -> list[list[str]]:

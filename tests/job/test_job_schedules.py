@@ -204,7 +204,7 @@ def test_columns_and_their_defaults(put: Put) -> None:
         cover=1.5,
         f_c=4000.0,
         f_y=60000.0,
-        f_yt=60000.0,
+        f_yt=None,
         l_u=None,
         k_x=1.0,
         k_y=1.0,
@@ -226,7 +226,7 @@ def test_every_optional_column_of_the_schedule(put: Put) -> None:
     first, second = read_columns(put("columns.csv", "\n".join([header, *rows])))
     assert (first.f_yt, first.l_u, first.k_x, first.k_y, first.frame) == (40000, 144, 1.2, 0.8, "sway")
     assert (first.lamb, first.aggregate, first.source) == (0.85, 0.75, "S-201")
-    assert (second.f_yt, second.l_u, second.k_x, second.k_y, second.frame) == (60000, None, 1, 1, None)
+    assert (second.f_yt, second.l_u, second.k_x, second.k_y, second.frame) == (None, None, 1, 1, None)
 
 
 def test_a_schedule_of_circular_columns_needs_no_b(put: Put) -> None:
@@ -341,7 +341,7 @@ def test_the_schedule_in_any_units_is_the_same(
     (root / "inputs" / "columns.csv").write_text(text, encoding="utf-8")
     (row,) = read_columns(root)
     assert (row.b, row.h, row.cover, row.ties.spacing) == pytest.approx((size,) * 4, rel=1e-12)
-    assert (row.f_c, row.f_y, row.f_yt) == pytest.approx((strength,) * 3, rel=1e-12)
+    assert (row.f_c, row.f_y) == pytest.approx((strength,) * 2, rel=1e-12)
 
 
 # forces.csv

@@ -92,6 +92,17 @@ def test_any_unit_of_the_dimension(put: Put, header: str, dimension: Dimension, 
     assert table.rows[0].values["x"] == pytest.approx(expected, rel=1e-12)
 
 
+# published: NIST Special Publication 811 (2008), appendix B.8: inch 25.4 mm. Exact, for clauses ask for 2 in or more.
+@pytest.mark.parametrize(
+    ("unit", "cell", "inches"),
+    [("mm", "50.8", 2.0), ("mm", "12.7", 0.5), ("cm", "2.54", 1.0), ("mm", "28.6512", 1.128)],
+)
+def test_a_converted_number_stands_exactly_on_its_limit(put: Put, unit: str, cell: str, inches: float) -> None:
+    table = read_table(put("bars.csv", f"x [{unit}]\n{cell}\n"), "bars", (Column("x", LENGTH),))
+    assert table is not None
+    assert table.rows[0].values["x"] == inches
+
+
 @pytest.mark.parametrize(
     ("cell", "expected"),
     [

@@ -261,6 +261,16 @@ def test_trap_excess_steel_counts_only_where_it_is_allowed(kind: str, name: str,
     assert said is (factor == 1.0)
 
 
+# common practice: 318-19 Tables 25.4.3.2 and 25.4.4.3, 6 d_b centre to centre, 5 d_b clear of a No. 8.
+@pytest.mark.parametrize(("clear", "factor"), [(5.1, 1.0), (5.0, 1.0), (4.9, 1.6)])
+@pytest.mark.parametrize("kind", ["hook 90", "hook 180", "headed"])
+def test_clear_spacing_counts_as_spacing_of_hooks_and_heads(
+    kind: str, clear: float, factor: float, row: Row, e19: Edition
+) -> None:
+    confined = length(row(kind, confining_ties=True, clear_spacing=clear), e19)
+    assert length(row(kind, clear_spacing=clear), e19) == pytest.approx(factor * confined)
+
+
 # Laps
 
 
