@@ -265,10 +265,15 @@ def read(given: object, dimension: Dimension | None, name: str = "value", system
         raise UnitError(name, [Problem(f"{name} = {given}", "a finite number", "correct the value")])
     found = dimension_of(unit) if unit else RATIO
     if dimension is None:
-        return Measured(number * factor(unit, system), found, unit, number, _written(given))
+        return Measured(_coherent(number, unit, system), found, unit, number, _written(given))
     if found.powers != dimension.powers or (found == ANGLE) != (dimension == ANGLE):
         raise _wrong_dimension(name, given, found, dimension, system)
-    return Measured(number * (factor(unit, system) if unit else 1.0), dimension, unit, number, _written(given))
+    return Measured(_coherent(number, unit, system), dimension, unit, number, _written(given))
+
+
+def _coherent(number: float, unit: str, system: System) -> float:
+    # 25.4 mm are 1 in, not 0.9999999999999999 in: fourteen digits clear the noise of the conversion.
+    return float(f"{number * factor(unit, system):.14g}") if unit else number
 
 
 def _written(given: object) -> str:

@@ -16,6 +16,7 @@ __all__ = [
     "cited_in",
     "coated_bar",
     "coated_bar_by_c_b",
+    "coated_bar_unknown",
     "coated_head",
     "coated_hook",
     "concrete_strength",
@@ -119,6 +120,13 @@ def coated_bar_by_c_b(*, c_b: Length, d_b: Length) -> Ratio:
         psi_e = 1.5
     else:
         psi_e = 1.2
+    return psi_e
+
+
+@formula(*_STRAIGHT)
+def coated_bar_unknown() -> Ratio:
+    """Coating factor of straight epoxy-coated or dual-coated bars, cover or spacing not known: the larger one."""
+    psi_e = 1.5
     return psi_e
 
 

@@ -70,6 +70,9 @@ def _coating_straight(row: TerminationLike, _edition: Edition) -> Choice:
         return Choice(factors.uncoated, _coating_words(row))
     if row.clear_cover is not None and row.clear_spacing is not None:
         return Choice(factors.coated_bar, _coating_words(row))
+    if row.c_b is None:
+        reason = f"{_coating_words(row)} Clear cover or clear spacing not stated: the smaller factor cannot be claimed."
+        return Choice(factors.coated_bar_unknown, reason)
     return Choice(
         factors.coated_bar_by_c_b, f"{_coating_words(row)} c_b is below 3.5 d_b where cover or spacing is short."
     )

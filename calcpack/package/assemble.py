@@ -97,7 +97,7 @@ def input_digests(job: Job) -> list[dict[str, str]]:
 
 def _revision(revision: Any) -> dict[str, str]:
     if revision is None:
-        return {"letter": "", "date": "", "purpose": "", "description": ""}
+        return {"letter": "none", "date": "", "purpose": "none stated", "description": ""}
     return {
         "letter": revision.letter,
         "date": revision.date.isoformat(),

@@ -148,5 +148,7 @@ class _View:
 
 def date_text(iso: str) -> str:
     """A date as printed: ``2 Nov 2026``."""
+    if not iso:
+        return "not dated"
     day = date.fromisoformat(iso)
     return f"{day.day} {_MONTHS[day.month - 1]} {day.year}"

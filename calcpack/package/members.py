@@ -2,26 +2,34 @@
 
 from __future__ import annotations
 
-from collections.abc import Sequence
-from dataclasses import dataclass
-from typing import Any
+from collections.abc import Callable, Mapping, Sequence
+from dataclasses import dataclass, field
+from pathlib import Path
+from typing import Any, TypeVar
 
 from calcpack.aci318.editions import edition
 from calcpack.errors import InputError, TableError
 from calcpack.job import Job, match, read_columns, read_forces, read_terminations
 from calcpack.members import anchorage, column
 from calcpack.members.results import CheckResult
+from calcpack.members.termination import KINDS
 
 __all__ = ["JobChecks", "check_members"]
 
 
 @dataclass(frozen=True)
 class JobChecks:
-    """Results of every check of the schedules, and what members owe beyond them as (text, file) pairs."""
+    """Results of every check of the schedules, and what members owe beyond them as (text, file) pairs.
+
+    Attributes
+    ----------
+    columns, terminations : the file of each mark
+    """
 
     results: tuple[CheckResult, ...]
     owed: tuple[tuple[str, str], ...]
-    columns: frozenset[str]
+    columns: Mapping[str, str] = field(default_factory=dict)
+    terminations: Mapping[str, str] = field(default_factory=dict)
 
     def failed(self) -> Sequence[CheckResult]:
         """The checks that are not OK."""
@@ -29,7 +37,7 @@ class JobChecks:
 
     def where(self, result: CheckResult) -> str:
         """The table a result comes from."""
-        return "inputs/columns.csv" if result.mark in self.columns else "inputs/anchorage.csv"
+        return (self.terminations if result.check in KINDS else self.columns)[result.mark]
 
 
 def check_members(job: Job) -> JobChecks:
@@ -40,40 +48,36 @@ def check_members(job: Job) -> JobChecks:
     TableError, RangeError : everything that is wrong in the tables, at once
     """
     code = edition(job.codes.concrete)
-    columns, forces, terminations = _tables(job)
     errors: list[InputError] = []
+    columns, forces, terminations = (_try(errors, reader, job.root) or () for reader in _READERS)
+    _try(errors, lambda: job.givens)
     results: list[CheckResult] = []
     owed: list[tuple[str, str]] = []
     for row in columns:
         own = [force for force in forces if force.mark == row.mark]
-        try:
-            results += column.check(row, own, code)
-            owed += [(f"{row.mark}: {name}", "inputs/columns.csv") for name in column.owed(row, own)]
-        except InputError as error:
-            errors.append(error)
+        results += _try(errors, column.check, row, own, code) or ()
+        owed += [(f"{row.mark}: {name}", row.file) for name in column.owed(row, own)]
     for termination in terminations:
-        try:
-            results.append(anchorage.check(termination, code))
-        except InputError as error:
-            errors.append(error)
-    if errors:
-        raise errors[0] if len(errors) == 1 else type(errors[0]).gathered("the schedules cannot be checked", errors)
-    return JobChecks(tuple(results), tuple(owed), frozenset(row.mark for row in columns))
-
-
-def _tables(job: Job) -> tuple[Any, Any, Any]:
-    tables: list[Any] = []
-    errors: list[InputError] = []
-    for reader in (read_columns, read_forces, read_terminations):
-        try:
-            tables.append(reader(job.root))
-        except InputError as error:
-            errors.append(error)
+        found = _try(errors, anchorage.check, termination, code)
+        results += [found] if found else []
     if not errors:
-        try:
-            match(tables[0], tables[1])
-        except InputError as error:
-            errors.append(error)
+        _try(errors, match, columns, forces)
     if errors:
-        raise errors[0] if len(errors) == 1 else TableError.gathered("the inputs cannot be read", errors)
-    return tables[0], tables[1], tables[2]
+        words = "the inputs cannot be read" if any(isinstance(error, TableError) for error in errors) else _NO_CHECK
+        raise errors[0] if len(errors) == 1 else type(errors[0]).gathered(words, errors)
+    files = [{row.mark: row.file for row in rows} for rows in (columns, terminations)]
+    return JobChecks(tuple(results), tuple(owed), *files)
+
+
+_READERS: tuple[Callable[[Path], tuple[Any, ...]], ...] = (read_columns, read_forces, read_terminations)
+_NO_CHECK = "the schedules cannot be checked"
+_T = TypeVar("_T")
+
+
+def _try(errors: list[InputError], step: Callable[..., _T], *arguments: Any) -> _T | None:
+    """Take a step, or note why it cannot be taken, so that what is wrong is told all at once."""
+    try:
+        return step(*arguments)
+    except InputError as error:
+        errors.append(error)
+        return None

@@ -61,13 +61,6 @@ def _reasons(row: Row, edition: str) -> set[str]:
             and needed is not None
             and needed <= given < 2 * needed
         ),
-        # The code asks for both; where neither they nor c_b are stated, the choice between 1.2 and 1.5 has no ground.
-        "coating": (
-            _by_tension(row)
-            and row.get("coating") in ("epoxy", "dual")
-            and row.get("c_b") is None
-            and (row.get("clear_cover") is None or row.get("clear_spacing") is None)
-        ),
     }
     return {name for name, wrong in found.items() if wrong}
 
@@ -84,9 +77,8 @@ def _wrong_lightweight(row: Row, edition: str) -> bool:
     lamb, kind = _lightweight(row), row["kind"]
     if kind == "headed":
         return lamb != 1
-    if kind == "lap compression" and not _by_tension(row):
-        return False
-    if edition == "14" and "hook" not in kind:
+    unused = kind == "lap compression" and not _by_tension(row)
+    if unused or (edition == "14" and "hook" not in kind):
         return not 0.75 <= lamb <= 1
     return lamb not in (0.75, 1)
 
@@ -131,6 +123,8 @@ def _tension(row: Row, edition: str) -> float:
     psi_e = 1.0
     if epoxy and cover is not None and gap is not None:
         psi_e = 1.2 if cover >= 3 * diameter and gap >= 6 * diameter else 1.5
+    elif epoxy and row.get("c_b") is None:
+        psi_e = 1.5  # 1.2 has to be shown; without cover and spacing it is not
     elif epoxy:
         # c_b, by definition the lesser of cover + d_b/2 and half the centre spacing, is 3.5 d_b where both just hold.
         psi_e = 1.2 if row["c_b"] >= 3.5 * diameter else 1.5
@@ -183,7 +177,7 @@ def _psi_o(row: Row) -> float:
 def _psi_ties(row: Row) -> float:
     """psi_r of hooks and psi_p of heads: enough ties, or bars at 6 d_b centre to centre or more."""
     diameter, gap = _diameter(row), row.get("clear_spacing")
-    spread = gap is not None and gap >= 5 * diameter
+    spread = gap is not None and gap + diameter >= 6 * diameter
     return 1.0 if int(row["bar"].lstrip("#")) <= 11 and (row.get("confining_ties") or spread) else 1.6
 
 

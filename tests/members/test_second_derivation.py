@@ -34,7 +34,6 @@ NAMES = {
     r"^lambda = ": "lightweight",
     r"^A_s_required = ": "areas",
     r"^lap_class = A, A_s_required": "class A",
-    r"^coating = ": "coating",
 }
 
 TIMES = (0.75, 1, 1.5, 2, 2.5, 3, 3.5, 4)
