@@ -273,7 +273,8 @@ def read(given: object, dimension: Dimension | None, name: str = "value", system
 
 def _coherent(number: float, unit: str, system: System) -> float:
     # 25.4 mm are 1 in, not 0.9999999999999999 in: fourteen digits clear the noise of the conversion.
-    return float(f"{number * factor(unit, system):.14g}") if unit else number
+    size = factor(unit, system) if unit else 1.0
+    return number if size == 1.0 else float(f"{number * size:.14g}")
 
 
 def _written(given: object) -> str:

@@ -519,15 +519,21 @@ def test_feet_and_inches_add_up(feet: int, inches: int, sixteenths: int) -> None
     assert read(f"{feet}'-{inches} {sixteenths}/16\"", LENGTH).value == 12 * feet + inches + sixteenths / 16
 
 
+# NIST SP 811: one inch is 25.4 mm exactly.
+@pytest.mark.parametrize(("text", "inches"), [("25.4 mm", 1.0), ("50.8 mm", 2.0), ("304.8 mm", 12.0), ("76.2 mm", 3.0)])
+def test_round_millimetres_are_round_inches(text: str, inches: float) -> None:
+    assert read(text, LENGTH).value == inches
+
+
 @given(st.floats(-360, 360))
 def test_degrees_become_radians(angle: float) -> None:
-    assert read(f"{angle!r} deg", ANGLE).value == pytest.approx(math.radians(angle), rel=1e-14, abs=1e-300)
+    assert read(f"{angle!r} deg", ANGLE).value == pytest.approx(math.radians(angle), rel=1e-13, abs=1e-300)
     assert read(f"{math.radians(angle)!r} rad", ANGLE).value == math.radians(angle)
 
 
 @given(st.floats(0, 1000))
 def test_percent_is_a_hundredth(share: float) -> None:
-    assert read(f"{share!r} %", RATIO).value == pytest.approx(share / 100, rel=1e-14)
+    assert read(f"{share!r} %", RATIO).value == pytest.approx(share / 100, rel=1e-13)
 
 
 @given(st.text(max_size=30))
