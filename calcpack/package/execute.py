@@ -115,10 +115,19 @@ def _failed(notebook: Any, path: Path, error: Any) -> Outcome:
         None,
     )
     place = f"sheets/{path.name}, cell [{cell.execution_count}]" if cell else f"sheets/{path.name}"
-    source = next((line for line in cell.source.splitlines() if line.strip()), "") if cell else ""
-    told = re.search(r"in line \d+: (.*)", str(error.traceback))
+    trace = re.sub(r"\x1b\[[0-9;]*m", "", str(error.traceback))
+    told = re.search(r"in line \d+: (.*)", trace)
+    source = _line(cell.source if cell else "", re.search(r"Cell In\[\d+\], line (\d+)", trace))
     message = f"{error.ename}: {error.evalue}".replace("\n", "\n      ")
     return Outcome(failure=Problem(f"{place}: {told[1] if told else source}", f"\n      {message}"))
+
+
+def _line(source: str, at: re.Match[str] | None) -> str:
+    """The line of a cell at which it failed; the first that says something where that is not told."""
+    lines = source.splitlines()
+    if at and int(at[1]) <= len(lines):
+        return lines[int(at[1]) - 1].strip()
+    return next((line for line in lines if line.strip()), "")
 
 
 def _notebook(path: Path) -> Any:

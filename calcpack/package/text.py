@@ -20,6 +20,7 @@ __all__ = ["anchor", "breakable", "html_text", "literal", "parse", "plain_text",
 
 Token = Mapping[str, Any]
 
+_DIGEST = re.compile(r"[0-9a-f]{64}")
 _LONG = re.compile(r"[^\s\u200b/-]{25,}")
 _PIECE = 12
 _KEPT = re.compile(r"[A-Za-z0-9_.:-]")
@@ -56,8 +57,11 @@ def _shown(char: str) -> str:
 
 
 def breakable(text: str) -> str:
-    """The text with places to break in words too long for a column."""
-    return _LONG.sub(lambda match: "\u200b".join(_pieces(match.group())), text)
+    """The text with places to break in words too long for a column; digests have room and stay whole.
+
+    A break has no glyph of its own: readers of a PDF find it behind every glyph that it follows somewhere.
+    """
+    return _LONG.sub(lambda match: match[0] if _DIGEST.fullmatch(match[0]) else "\u200b".join(_pieces(match[0])), text)
 
 
 def _pieces(word: str) -> list[str]:

@@ -54,6 +54,7 @@ def test_printable(given: str, shown: str) -> None:
 
 def test_a_long_word_gets_places_to_break_and_a_short_one_none() -> None:
     assert text.breakable("W" * 24) == "W" * 24
+    assert text.breakable("0f" * 32) == "0f" * 32
     assert text.breakable("W" * 25) == f"{'W' * 12}\u200b{'W' * 12}\u200bW"
     assert text.breakable(("W" * 20 + " ") * 3) == ("W" * 20 + " ") * 3
 
