@@ -161,6 +161,7 @@ def _progress(stream: TextIO | None = None) -> Callable[[str], None]:
         return lambda _: None
 
     def say(text: str) -> None:
+        """Print a line of progress."""
         print(f"  {text}", file=out, flush=True)
 
     return say

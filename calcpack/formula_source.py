@@ -143,9 +143,11 @@ class _Reader:
         self.count = 0
 
     def block(self, statements: Iterable[ast.stmt]) -> tuple[Line | Branch, ...]:
+        """Read statements in order."""
         return tuple(self.statement(statement) for statement in statements)
 
     def statement(self, statement: ast.stmt) -> Line | Branch:
+        """Read one statement: a line or a branch."""
         match statement:
             case ast.Assign(targets=[ast.Name(id=target)], value=value):
                 return self.line(target, value, None)
@@ -173,10 +175,12 @@ class _Reader:
         return first, second
 
     def refuse_reserved(self, name: str) -> None:
+        """Refuse a name that the language of lines keeps for itself."""
         if name in expression.FUNCTIONS or name in expression.CONSTANTS or name in UNIT_CONSTANTS:
             raise FormulaError(f"{self.function.__name__}: {name} has a meaning of its own; choose another symbol")
 
     def line(self, target: str, value: ast.expr, annotation: ast.expr | None) -> Line:
+        """Read one line, and note what it sets."""
         self.refuse_reserved(target)
         expression.check(value)
         self.scope(value)
@@ -187,6 +191,7 @@ class _Reader:
         return Line(target, value, dimension, self.count)
 
     def target_dimension(self, target: str, annotation: ast.expr | None) -> Dimension:
+        """The dimension of what a line sets: annotated, of the result, or of the notation table."""
         if annotation is not None:
             try:
                 hint = eval(compile(ast.Expression(annotation), "<annotation>", "eval"), self.function.__globals__)
@@ -205,6 +210,7 @@ class _Reader:
         )
 
     def scope(self, node: ast.expr) -> None:
+        """Refuse names and functions that are not what the printed line would say."""
         scope = {**self.function.__globals__, **dict.fromkeys(self.function.__code__.co_freevars)}
         for name in dict.fromkeys(part.id for part in ast.walk(node) if isinstance(part, ast.Name)):
             wanted = expression.FUNCTIONS.get(name, expression.CONSTANTS.get(name))
@@ -239,6 +245,7 @@ def unit_constant(node: ast.AST) -> tuple[float, str] | None:
 
 class _DropUnits(ast.NodeTransformer):
     def visit_BinOp(self, node: ast.BinOp) -> ast.expr:
+        """A dimensioned constant as its number; anything else as it is."""
         constant = unit_constant(node)
         if constant:
             return ast.Constant(constant[0])

@@ -89,6 +89,7 @@ def watch_files(root: Path) -> None:
     prefix = str(root) + os.sep
 
     def note(opened: Any) -> None:
+        """Note a file of the job that was opened."""
         path = os.path.abspath(opened)  # noqa: PTH100 - pathlib is too slow for every open of a process
         name = path[len(prefix) :].replace(os.sep, "/")
         if path.startswith(prefix) and not _FOREIGN.match(name) and not _quiet:
@@ -96,6 +97,7 @@ def watch_files(root: Path) -> None:
                 notes.write(name + "\n")
 
     def hook(event: str, arguments: tuple[Any, ...]) -> None:
+        """See every file that the process opens."""
         if event == "open" and isinstance(arguments[0], (str, os.PathLike)):
             note(arguments[0])
 

@@ -178,6 +178,7 @@ class _Maker:
         return found
 
     def markdown(self, source: str) -> None:
+        """Take in a Markdown cell."""
         tokens: list[Mapping[str, Any]] = []
         for token in text.parse(source):
             if token["type"] == "heading":
@@ -200,6 +201,7 @@ class _Maker:
             self.made.append({"kind": "heading", "level": self._level, "text": self.printer.text(words)})
 
     def item(self, item: Mapping[str, Any]) -> None:
+        """Take in an item of a code cell."""
         if item["type"] == "heading":
             self._heading(item["text"], int(item.get("level", 2)))
             return

@@ -50,6 +50,7 @@ class _Clock:
         self.last = time.perf_counter()
 
     def lap(self, stage: str) -> None:
+        """End a stage."""
         now = time.perf_counter()
         self.seconds[stage] = now - self.last
         self.last = now

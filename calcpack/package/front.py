@@ -40,9 +40,11 @@ class _View:
         self.printer = printer
 
     def text(self, value: object) -> str:
+        """A text of the model."""
         return self.printer.text("" if value is None else f"{value:.5g}" if isinstance(value, float) else value)
 
     def texts(self, rows: Any) -> list[dict[str, str]]:
+        """Texts of the model."""
         return [{key: self.text(value) for key, value in row.items()} for row in rows]
 
     def page(self, model: Mapping[str, Any]) -> dict[str, Any]:
@@ -79,11 +81,13 @@ class _View:
         }
 
     def signature(self, role: str, people: Any) -> dict[str, str]:
+        """A place to sign."""
         acting = [one for one in people if role in one["roles"]]
         names = ", ".join(", ".join(filter(None, (one["name"], one.get("licence")))) for one in acting)
         return {"label": f"{role.capitalize()}: signature and date", "name": self.text(names)}
 
     def revision(self, row: Mapping[str, Any]) -> dict[str, Any]:
+        """A line of the revision log."""
         plain = {key: value for key, value in row.items() if key != "sheets"}
         return {
             **self.texts([plain])[0],
@@ -92,6 +96,7 @@ class _View:
         }
 
     def sheet(self, name: str) -> dict[str, str]:
+        """A sheet of the contents."""
         return {"text": self.text(name), "link": self.printer.link(name)}
 
     def registers(self, model: Mapping[str, Any]) -> dict[str, Any]:
@@ -109,6 +114,7 @@ class _View:
         }
 
     def value(self, row: Mapping[str, Any]) -> dict[str, Any]:
+        """A row of a register."""
         return {
             "symbol": self.printer.symbol(row["symbol"]), "means": self.text(row["means"]),
             "shown": self.text(row["shown"]), "source": self.text(row["source"]), "sheet": self.text(row["sheet"]),
@@ -117,6 +123,7 @@ class _View:
         }  # fmt: skip
 
     def ratio(self, row: Mapping[str, Any]) -> dict[str, Any]:
+        """A row of the summary of ratios."""
         keys = ("sheet", "what", "demand", "capacity", "ratio_text", "verdict", "clause")
         words = {key: self.text(row[key]) for key in keys}
         return {

@@ -97,6 +97,7 @@ class _Run:
         self.waiting: dict[Path, str] = {}
 
     def everything(self) -> None:
+        """Run what has to run, in a results folder of this run alone."""
         shutil.rmtree(self.results, ignore_errors=True)
         self.results.mkdir(parents=True)
         try:
@@ -109,6 +110,7 @@ class _Run:
             shutil.rmtree(self.results, ignore_errors=True)
 
     def work_off(self) -> None:
+        """Start what is ready, take in what is finished, until nothing is left or nothing moves."""
         todo, running = list(self.paths), dict[Future[Any], Path]()
         with ThreadPoolExecutor(_WORKERS) as pool:
             while todo or running:
@@ -145,6 +147,7 @@ class _Run:
         return bool(todo) and moved
 
     def ready(self, path: Path) -> bool:
+        """Whether the sheet that a notebook waits for is done."""
         return self.waiting.get(path, "") in {"", *self.ledgers}
 
     def stale(self, path: Path) -> str:
@@ -173,10 +176,12 @@ class _Run:
         return ""
 
     def may_come(self, sheet: str, path: Path) -> bool:
+        """Whether a notebook still to run may make the sheet."""
         others = [other for other in self.paths if other not in self.done and other != path]
         return any((self.kept(other) or {}).get("sheet") in (sheet, None) for other in others)
 
     def kept(self, path: Path) -> dict[str, Any] | None:
+        """The record of the last run of a notebook."""
         if path not in self.records:
             try:
                 record = json.loads((self.cache / f"{path.stem}.json").read_text("utf-8"))
@@ -218,6 +223,7 @@ class _Run:
         return ""
 
     def settle(self, path: Path, notebook: Any, reason: str) -> None:
+        """Take in an executed notebook."""
         import nbformat
 
         node = nbformat.from_dict(notebook)

@@ -60,15 +60,18 @@ class _Latex:
                 yield kind, match[kind]
 
     def peek(self) -> str:
+        """The next token."""
         return self.tokens[self.at][1] if self.at < len(self.tokens) else ""
 
     def take(self, *expected: str) -> tuple[str, str]:
+        """Take the next token, one of those expected."""
         if self.at >= len(self.tokens) or (expected and self.peek() not in expected):
             raise LayoutError(f"cannot read the layout {self.text!r}: found {self.peek()!r}, not {expected}")
         self.at += 1
         return self.tokens[self.at - 1]
 
     def sum(self) -> Node:
+        """Read terms."""
         terms = [("-" if self.peek() == "-" and self.take() else "+", self.product())]
         while self.peek() in ("+", "-"):
             terms.append((self.take()[1], self.product()))
@@ -77,6 +80,7 @@ class _Latex:
         return ("add", tuple(terms))
 
     def product(self) -> Node:
+        """Read factors."""
         factors = [self.power()]
         while self.peek() == r"\cdot":
             self.take()
@@ -84,6 +88,7 @@ class _Latex:
         return factors[0] if len(factors) == 1 else ("mul", tuple(factors))
 
     def power(self) -> Node:
+        """Read a base and its exponent."""
         base = self.atom()
         if self.peek() == "^":
             self.take()
@@ -91,12 +96,14 @@ class _Latex:
         return base
 
     def group(self) -> Node:
+        """Read a group in braces."""
         self.take("{")
         inner = self.sum()
         self.take("}")
         return inner
 
     def bracket(self) -> tuple[Node, ...]:
+        """Read arguments in brackets."""
         self.take("(")
         parts = [self.sum()]
         while self.peek() == ",":
@@ -106,6 +113,7 @@ class _Latex:
         return tuple(parts)
 
     def atom(self) -> Node:
+        """Read a value, a quotient, a root, brackets or a function."""
         kind, text = self.take()
         if kind == "slot":
             return ("slot", token_number(text))
@@ -126,6 +134,7 @@ class _Latex:
         return ("call", "atan2" if name == "atan" and len(arguments) == 2 else name, arguments)
 
     def function(self, kind: str, text: str) -> str:
+        """Read the name of a function."""
         if text in (r"\operatorname", r"\mathrm"):
             self.take("{")
             name = self.take()[1]
@@ -140,6 +149,7 @@ class _Latex:
         return name
 
     def digits(self) -> str:
+        """Read the digits below a logarithm."""
         if self.peek() == "{":
             self.take()
             digits = self.take()[1]

@@ -61,20 +61,25 @@ class _Tokens(ast.NodeTransformer):
         self.slots: list[Slot] = []
 
     def token(self, slot: Slot) -> ast.Name:
+        """A fresh token for a slot."""
         self.slots.append(slot)
         return ast.Name(token_name(len(self.slots) - 1))
 
     def visit_Name(self, node: ast.Name) -> ast.expr:
+        """A token for a symbol."""
         return self.token(Slot("const", "pi") if node.id in expression.CONSTANTS else Slot("symbol", node.id))
 
     def visit_Constant(self, node: ast.Constant) -> ast.expr:
+        """A token for a number."""
         return self.token(Slot("number", repr(node.value)))
 
     def visit_Call(self, node: ast.Call) -> ast.expr:
+        """The arguments of a function."""
         node.args = [self.visit(argument) for argument in node.args]
         return node
 
     def visit_BinOp(self, node: ast.BinOp) -> ast.expr:
+        """Both sides of an operator."""
         constant = unit_constant(node)
         if constant:
             return self.token(Slot("number", repr(constant[0]), constant[1]))
@@ -111,6 +116,7 @@ class _Groups(ast.NodeTransformer):
         self.inner: dict[int, ast.expr] = {}
 
     def apart(self, node: ast.expr) -> ast.expr:
+        """A token for a group that is laid out by itself."""
         if isinstance(node, ast.Name):
             return node
         number = _FIRST_GROUP + len(self.inner)
@@ -118,9 +124,11 @@ class _Groups(ast.NodeTransformer):
         return ast.Name(token_name(number))
 
     def visit_Call(self, node: ast.Call) -> ast.expr:
+        """The arguments of a function."""
         return ast.Call(node.func, [self.apart(argument) for argument in node.args], [])
 
     def visit_BinOp(self, node: ast.BinOp) -> ast.expr:
+        """Both sides of an operator."""
         outer = isinstance(node.op, (ast.Add, ast.Sub))
         left = self.visit(node.left) if outer or not _is_sum(node.left) else self.apart(node.left)
         keep = isinstance(node.op, ast.Add) or not _is_sum(node.right)

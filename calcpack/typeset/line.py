@@ -142,6 +142,7 @@ def _print(recorded: Recorded, layouts: FormulaLayout, scope: _Scope) -> Printed
     result = convert(recorded.value, line_unit)
 
     def evaluate(values: Sequence[float]) -> float:
+        """The line from printed values; refused where a printed condition does not hold."""
         given = dict(zip(names, values, strict=True))
         for test in tests:
             if not expression.evaluate(_plain(test), given, condition=True):
