@@ -154,6 +154,8 @@ _ROWS: tuple[tuple[str, str, Dimension, str, str], ...] = (
     ("P_D", "P_D", FORCE, "axial force, dead load", "any"),
     ("P_L", "P_L", FORCE, "axial force, live load", "any"),
     ("P_Lr", "P_{Lr}", FORCE, "axial force, roof live load", "any"),
+    ("M_ux", "M_{ux}", MOMENT, "factored moment about the x axis", "any"),
+    ("M_uy", "M_{uy}", MOMENT, "factored moment about the y axis", "any"),
     ("M_u", "M_u", MOMENT, "factored moment", "any"),
     ("M_n", "M_n", MOMENT, "nominal flexural strength", "any"),
     ("V_u", "V_u", FORCE, "factored shear force", "any"),

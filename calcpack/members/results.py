@@ -31,7 +31,7 @@ class CheckResult:
     combination: str
     ratio: float | None
     verdict: str
-    values: Mapping[str, tuple[float, str]] = field(default_factory=dict)
+    values: Mapping[str, tuple[float | None, str]] = field(default_factory=dict)
     notes: tuple[str, ...] = ()
 
 

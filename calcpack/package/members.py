@@ -11,6 +11,7 @@ from calcpack.aci318.editions import edition
 from calcpack.errors import InputError, TableError
 from calcpack.job import Job, match, read_columns, read_forces, read_terminations
 from calcpack.members import anchorage, column
+from calcpack.members.interaction import axial_and_bending
 from calcpack.members.results import CheckResult
 from calcpack.members.termination import KINDS
 
@@ -55,7 +56,10 @@ def check_members(job: Job) -> JobChecks:
     owed: list[tuple[str, str]] = []
     for row in columns:
         own = [force for force in forces if force.mark == row.mark]
-        results += _try(errors, column.check, row, own, code) or ()
+        checked = _try(errors, column.check, row, own, code)
+        if checked is not None:
+            bent = _try(errors, axial_and_bending, row, own, code)
+            results += [*([bent] if bent else []), *checked]
         owed += [(f"{row.mark}: {name}", row.file) for name in column.owed(row, own)]
     for termination in terminations:
         found = _try(errors, anchorage.check, termination, code)

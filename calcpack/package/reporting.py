@@ -56,7 +56,9 @@ def check_text(job: Job, checks: JobChecks, found: Sequence[Open]) -> str:
 def _row(result: CheckResult) -> tuple[str, str, str, str, str]:
     ratio = f"{result.ratio:.3f}" if result.ratio is not None else "-"
     values = ", ".join(
-        f"{symbol} = {with_unit(number_text(value), unit)}" for symbol, (value, unit) in result.values.items()
+        f"{symbol} = {with_unit(number_text(value), unit)}"
+        for symbol, (value, unit) in result.values.items()
+        if value is not None
     )
     rest = "  ".join(filter(None, [result.combination, values, f"[{result.clause}]"]))
     return result.mark, result.check, ratio, result.verdict or "-", rest

@@ -20,6 +20,8 @@ TIED = Column("C1", 16.0, 16.0, Bars(8, 9, 3, 3), Ties("ties", 3, 16.0), 1.5, 4_
 ROUND = Column("C2", None, 21.5, Bars(12, 7), Ties("spiral", 3, 2.0), 1.5, 3_000.0, 40_000.0, aggregate=0.75)
 FORCES = [Force("1.4D", 300_000.0), Force("1.2D+1.6L", 690_000.0), Force("0.9D+1.0W", -20_000.0)]
 
+UNPRINTED = "axial force with bending is checked here, its working is not printed on a sheet yet"
+
 
 def by_name(results: list[CheckResult]) -> dict[str, CheckResult]:
     return {result.check: result for result in results}
@@ -228,9 +230,21 @@ def test_all_problems_of_a_column_come_at_once(each: Edition) -> None:
     ("column", "forces", "expected"),
     [
         (TIED, [Force("a", 1.0)], []),
-        (TIED, [Force("a", 1.0, Mx=2.0)], ["axial and bending"]),
-        (TIED, [Force("a", 1.0, My=None)], ["axial and bending"]),
-        (TIED, [Force("a", -1.0)], ["axial and bending"]),
+        (
+            TIED,
+            [Force("a", 1.0, Mx=2.0)],
+            [UNPRINTED],
+        ),
+        (
+            TIED,
+            [Force("a", 1.0, My=None)],
+            [UNPRINTED],
+        ),
+        (
+            TIED,
+            [Force("a", -1.0)],
+            [UNPRINTED],
+        ),
         (replace(TIED, l_u=144.0), [], ["slenderness"]),
         (TIED, [Force("a", 1.0, Vy=3.0)], ["shear"]),
         (TIED, [Force("a", 1.0, T=3.0)], ["torsion"]),
