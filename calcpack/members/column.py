@@ -132,6 +132,8 @@ def owed(column: ColumnLike, forces: Iterable[ForceLike]) -> list[str]:
     names = []
     if any(force.Mx is None or force.My is None or force.Mx or force.My or force.P < 0 for force in listed):
         names.append("axial force with bending is checked here, its working is not printed on a sheet yet")
+    if any(force.combination is None for force in listed):
+        names.append("load combinations: unfactored rows are not combined yet, and no check counts them")
     if column.l_u is not None:
         names.append("slenderness")
     if any(force.Vx or force.Vy for force in listed):

@@ -54,8 +54,11 @@ def check_members(job: Job) -> JobChecks:
     _try(errors, lambda: job.givens)
     results: list[CheckResult] = []
     owed: list[tuple[str, str]] = []
+    by_mark: dict[str, list[Any]] = {}
+    for force in forces:
+        by_mark.setdefault(force.mark, []).append(force)
     for row in columns:
-        own = [force for force in forces if force.mark == row.mark]
+        own = by_mark.get(row.mark, [])
         checked = _try(errors, column.check, row, own, code)
         if checked is not None:
             bent = _try(errors, axial_and_bending, row, own, code)
