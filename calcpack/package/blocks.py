@@ -101,7 +101,8 @@ def blocks(nb: Any, target: str, known: Collection[str] | None = None) -> list[B
             maker.markdown("".join(cell.source))  # a notebook as read from JSON may keep its lines apart
         for item in _items_of(cell):
             maker.item(item)
-    return maker.made
+    # Words that stand above the cell that opens the sheet belong on it, below its heading.
+    return sorted(maker.made, key=lambda block: block["kind"] != "sheet")
 
 
 @dataclass(frozen=True)

@@ -41,6 +41,14 @@ def test_a_sheet_in_order(sheets: list[Any], target: str) -> None:
     assert len(made[3]["rows"]) == 5
 
 
+@pytest.mark.parametrize("target", ["html", "typst"])
+def test_words_above_the_cell_that_opens_a_sheet_stand_below_its_heading(target: str) -> None:
+    sheet = {"type": "sheet", "id": "C-01", "subject": "Columns", "concrete": "ACI 318-19", "entries": [], "reads": []}
+    notebook = shown(sheet, note())
+    notebook.cells.insert(0, v4.new_markdown_cell("Words that came first."))
+    assert kinds(blocks(notebook, target)) == ["sheet", "text", "note"]
+
+
 def test_consecutive_givens_make_one_table_and_others_part_them() -> None:
     made = blocks(shown(given(), given("C-01/h"), note(), given("C-01/d")), "html")
     assert kinds(made) == ["given", "note", "given"]
