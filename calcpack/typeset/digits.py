@@ -9,6 +9,7 @@ from __future__ import annotations
 import re
 from collections.abc import Callable, Sequence
 from decimal import ROUND_HALF_EVEN, Decimal
+from itertools import chain, repeat
 
 __all__ = ["constant_text", "honest", "last_place", "number_text", "parse_number", "rounded", "stated_text"]
 
@@ -97,8 +98,9 @@ def honest(
     """
     text = number_text(result)
     tolerance = last_place(text) * (1 + 1e-9)
-    for extra in range(_MOST):
-        texts = tuple(first) if first and not extra else tuple(number_text(value, extra) for value in values)
+    origin = tuple(first) or ("",) * len(values)
+    attempts = (tuple(map(_more, values, origin, repeat(extra))) for extra in range(_MOST))
+    for texts in chain([origin] if first else [], attempts):
         try:
             printed = evaluate([parse_number(value) for value in texts])
         except (ArithmeticError, ValueError):
@@ -106,6 +108,12 @@ def honest(
         if abs(printed - parse_number(text)) <= tolerance:
             return texts, text
     return texts, text
+
+
+def _more(value: float, first: str, extra: int) -> str:
+    """The value with more figures; as it was first tried where that is the whole of it: 1.0 stays 1.0."""
+    whole = first and _clean(parse_number(first)) == _clean(value)
+    return first if whole else number_text(value, extra)
 
 
 def _clean(value: float) -> Decimal:

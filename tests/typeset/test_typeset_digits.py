@@ -65,7 +65,12 @@ def test_texts_of_the_origin_come_first() -> None:
     assert (texts, text) == (("16.55",), "33.1")
     # 17 * 2 = 34 is not 33.1: the text of the origin is too coarse for this line.
     texts, text = honest(lambda v: v[0] * 2, [16.54631], 33.09262, ["17"])
-    assert (texts, text) == (("16.546",), "33.1")
+    assert (texts, text) == (("16.55",), "33.1")
+
+
+def test_a_text_that_is_whole_is_kept_where_others_get_more_figures() -> None:
+    texts, text = honest(lambda v: v[0] * v[1], [16.54631, 1.0], 16.54631, ["17", "1.0"])
+    assert (texts, text) == (("16.55", "1.0"), "16.55")
 
 
 def test_more_figures_where_asked_for() -> None:
