@@ -19,6 +19,7 @@ from __future__ import annotations
 
 from collections.abc import Iterable
 from dataclasses import dataclass, replace
+from typing import Any
 
 __all__ = [
     "CalcpackError",
@@ -102,7 +103,12 @@ class RangeError(InputError):
 
 
 class TableError(InputError):
-    """A file of the job folder holds something that cannot be used."""
+    """A file of the job folder holds something that cannot be used.
+
+    `records` are the rows that can be used all the same, so that what a clause refuses in them is told as well.
+    """
+
+    records: tuple[Any, ...] = ()
 
 
 class SheetError(InputError):

@@ -5,16 +5,16 @@ Here a file is checked for what it says; whether a code allows it is decided whe
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Iterator, Sequence
+from collections.abc import Callable, Iterable, Iterator, Sequence
 from dataclasses import replace
 from pathlib import Path
 from typing import Any, TypeVar
 
-from calcpack.errors import Problem
+from calcpack.errors import Problem, TableError
 from calcpack.job.bars import Transverse, bar_size, parse_layout, parse_transverse
 from calcpack.job.givens import GivenValue, read_givens
 from calcpack.job.records import ColumnRow, ForceRow, Termination
-from calcpack.job.tables import Column, Row, Table, read_table, repeated, yes_no
+from calcpack.job.tables import Column, Row, Rule, Table, read_table, repeated, yes_no
 from calcpack.job.wording import did_you_mean, failure, shown
 from calcpack.units import AREA, FORCE, LENGTH, MOMENT, RATIO, STRESS
 
@@ -129,6 +129,17 @@ def _record(kind: type[_Record], row: Row, **changed: Any) -> _Record:
     return kind(**(values | changed), row=row.row, file=row.file)
 
 
+def _records(
+    root: Path, stem: str, columns: Sequence[Column], rule: Rule, make: Callable[[Row], _Record]
+) -> tuple[_Record, ...]:
+    try:
+        table = read_table(root, stem, columns, rule)
+    except TableError as error:
+        error.records = tuple(make(row) for row in error.records)
+        raise
+    return tuple(make(row) for row in table.rows) if table else ()
+
+
 def read_terminations(job_root: Path) -> tuple[Termination, ...]:
     """The bar terminations of inputs/anchorage, in file order; none where the file is absent.
 
@@ -136,9 +147,11 @@ def read_terminations(job_root: Path) -> tuple[Termination, ...]:
     ------
     TableError : everything that is wrong in the file
     """
-    table = read_table(job_root, "anchorage", _TERMINATION, _termination_rule)
-    rows = table.rows if table else ()
-    return tuple(_record(Termination, row, bar=row.values["bar"][0], bar_text=row.values["bar"][1]) for row in rows)
+    return _records(job_root, "anchorage", _TERMINATION, _termination_rule, _termination)
+
+
+def _termination(row: Row) -> Termination:
+    return _record(Termination, row, bar=row.values["bar"][0], bar_text=row.values["bar"][1])
 
 
 def _termination_rule(table: Table) -> Iterator[Problem]:
@@ -156,13 +169,12 @@ def read_columns(job_root: Path) -> tuple[ColumnRow, ...]:
     ------
     TableError : everything that is wrong in the file
     """
-    table = read_table(job_root, "columns", _COLUMN, _column_rule)
-    return tuple(_column(row, table) for row in table.rows) if table else ()
+    return _records(job_root, "columns", _COLUMN, _column_rule, _column)
 
 
-def _column(row: Row, table: Table) -> ColumnRow:
+def _column(row: Row) -> ColumnRow:
     ties: Transverse = row.values["ties"]
-    return _record(ColumnRow, row, ties=replace(ties, spacing=ties.spacing * table.sizes["cover"]))
+    return _record(ColumnRow, row, ties=replace(ties, spacing=ties.spacing * row.sizes["cover"]))
 
 
 def _column_rule(table: Table) -> Iterator[Problem]:
@@ -186,8 +198,7 @@ def read_forces(job_root: Path) -> tuple[ForceRow, ...]:
     ------
     TableError : everything that is wrong in the file
     """
-    table = read_table(job_root, "forces", _FORCE, _force_rule)
-    return tuple(_record(ForceRow, row) for row in table.rows) if table else ()
+    return _records(job_root, "forces", _FORCE, _force_rule, lambda row: _record(ForceRow, row))
 
 
 def _force_rule(table: Table) -> Iterator[Problem]:

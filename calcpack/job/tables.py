@@ -7,8 +7,8 @@ from __future__ import annotations
 
 import math
 import re
-from collections.abc import Callable, Iterable, Sequence
-from dataclasses import dataclass
+from collections.abc import Callable, Iterable, Mapping, Sequence
+from dataclasses import dataclass, field
 from pathlib import Path
 from typing import Any
 
@@ -29,11 +29,13 @@ class Row:
     """A row of a table: its values by symbol, and where it stands.
 
     A symbol is missing from `values` where its cell was wrong, and ``None`` or the default where it was empty.
+    `sizes` are the coherent units in one unit of each column.
     """
 
     file: str
     row: int
     values: dict[str, Any]
+    sizes: Mapping[str, float] = field(default_factory=dict)
 
     @property
     def where(self) -> str:
@@ -112,17 +114,21 @@ def read_table(root: Path, stem: str, columns: Sequence[Column], rule: Rule | No
     header = read_header(_trimmed(grid[0]) if grid else [], columns, file)
     problems = list(header.problems)
     defaults = {column.symbol: column.default for column in columns if column.symbol not in header.symbols}
+    sizes = {heading.column.symbol: heading.size for heading in header.headings}
     rows = []
     for number, cells in enumerate(grid[1:], 2):
         if any(cells):
-            row = Row(file, number, {})
+            row = Row(file, number, {}, sizes)
             problems.extend(_fill(row, cells, header, defaults))
             rows.append(row)
-    sizes = {heading.column.symbol: heading.size for heading in header.headings}
     table = Table(file, tuple(rows), header.symbols, sizes)
     problems.extend(rule(table) if rule else ())
     if problems:
-        raise failure(file, problems)
+        error = failure(file, problems)
+        if not header.problems:
+            wrong = {int(number) for problem in problems for number in re.findall(r", row (\d+)", problem.where)}
+            error.records = tuple(row for row in table.rows if row.row not in wrong)
+        raise error
     return table
 
 

@@ -50,7 +50,7 @@ def check_members(job: Job) -> JobChecks:
     """
     code = edition(job.codes.concrete)
     errors: list[InputError] = []
-    columns, forces, terminations = (_try(errors, reader, job.root) or () for reader in _READERS)
+    columns, forces, terminations = (_rows(errors, reader, job.root) for reader in _READERS)
     _try(errors, lambda: job.givens)
     results: list[CheckResult] = []
     owed: list[tuple[str, str]] = []
@@ -79,6 +79,15 @@ def check_members(job: Job) -> JobChecks:
 _READERS: tuple[Callable[[Path], tuple[Any, ...]], ...] = (read_columns, read_forces, read_terminations)
 _NO_CHECK = "the schedules cannot be checked"
 _T = TypeVar("_T")
+
+
+def _rows(errors: list[InputError], reader: Callable[[Path], tuple[Any, ...]], root: Path) -> tuple[Any, ...]:
+    """The rows of a table; where some cannot be read, that is noted and the others are still checked."""
+    try:
+        return reader(root)
+    except TableError as error:
+        errors.append(error)
+        return error.records
 
 
 def _try(errors: list[InputError], step: Callable[..., _T], *arguments: Any) -> _T | None:

@@ -66,6 +66,15 @@ def test_everything_wrong_in_all_tables_at_once(tmp_path: Path) -> None:
         assert name in places
 
 
+def test_a_cell_that_cannot_be_read_does_not_hide_what_a_clause_refuses_in_another_row(tmp_path: Path) -> None:
+    root = job(tmp_path, anchorage=ANCHORAGE.replace("#7,4000", "#7,none").replace("#8,4000", "#8,41"))
+    with pytest.raises(TableError) as caught:
+        check_members(load(root))
+    message = str(caught.value)
+    assert "none" in message
+    assert "f_c = 41 psi" in message
+
+
 def test_one_table_keeps_its_own_message(tmp_path: Path) -> None:
     with pytest.raises(TableError, match=r"anchorage\.csv") as caught:
         check_members(load(job(tmp_path, anchorage=ANCHORAGE.replace("#7", "#2"))))
