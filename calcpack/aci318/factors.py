@@ -139,7 +139,7 @@ def coated_hook() -> Ratio:
 
 @formula(*_STRAIGHT)
 def bar_size(*, d_b: Length) -> Ratio:
-    """Size factor: No. 6 and smaller."""
+    """Size factor, below 1 for No. 6 and smaller."""
     if d_b <= 0.75 * inch:
         psi_s = 0.8
     else:

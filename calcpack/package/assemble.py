@@ -13,6 +13,7 @@ from calcpack.ledger import Entry, Ledger
 from calcpack.package.collect import Content
 from calcpack.package.gate import Open, is_final
 from calcpack.package.release import release
+from calcpack.package.revisions import touched
 
 __all__ = ["DEFERENCE", "assemble", "ledger_bytes"]
 
@@ -56,7 +57,10 @@ def assemble(job: Job, content: Content, open_items: Sequence[Open], state: str)
         ],
         "originators": _names(job, "originator"),
         "checkers": _names(job, "checker"),
-        "log": [{**_revision(revision), "sheets": []} for revision in job.revisions],
+        "log": [
+            {**_revision(revision), "sheets": sheets, "words": words}
+            for revision, (sheets, words) in zip(job.revisions, touched(job, content), strict=True)
+        ],
         "open_count": len([item for item in open_items if item.blocks]),
         "assumed_count": len([item for item in open_items if item.kind == "assumed"]),
         "open": [{"kind": item.kind, "what": item.what, "where": item.where} for item in open_items],

@@ -161,6 +161,12 @@ def job_folder(root: Path) -> Path:
     return root
 
 
+def revision(letter: str, date: str, purpose: str, description: str, sheets: list[str], words: str) -> dict[str, Any]:
+    """A line of a revision log."""
+    stated = {"letter": letter, "date": date, "purpose": purpose, "description": description}
+    return {**stated, "sheets": sheets, "words": words}
+
+
 def model(sheets: list[Any], say: Callable[[str], str] = lambda text: text) -> dict[str, Any]:
     """The package model of these sheets; `say` makes every free text in it."""
     made: dict[str, Any] = {
@@ -177,8 +183,8 @@ def model(sheets: list[Any], say: Callable[[str], str] = lambda text: text) -> d
         "originators": say("A. Rowe"),
         "checkers": say("S. Tanaka"),
         "log": [
-            {"letter": "A", "date": "2026-11-02", "purpose": say("Plan review"), "description": "First", "sheets": []},
-            {"letter": "B", "date": "2026-11-20", "purpose": "Plan review", "description": "Bars", "sheets": ["C-01"]},
+            revision("A", "2026-11-02", say("Plan review"), "First", [], "all"),
+            revision("B", "2026-11-20", "Plan review", "Bars", ["C-01"], ""),
         ],
         "open_count": 1,
         "open": [{"kind": say("assumed"), "what": say("P_u"), "where": say("sheet C-01")}],
