@@ -101,7 +101,9 @@ def test_every_page_names_its_sheet_its_revision_and_its_number(pages: list[str]
         assert block(page, "Job") == "26-117"
         assert block(page, "Title") == "Osier Bank Boatworks: workshop and loft"
         assert block(page, "Revision") == "A · 20 Nov 2026"
-        assert (block(page, "Originator"), block(page, "Checker")) == ("M. K. Verhaal", "T. S. Orrin")
+        assert (block(page, "Originator"), block(page, "Checker")) == (
+            "M. K. Verhaal, unsigned", "T. S. Orrin, unsigned",
+        )  # fmt: skip
         sheet, subject = block(page, "Sheet"), block(page, "Subject")
         assert sheet
         assert subject

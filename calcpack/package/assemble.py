@@ -117,7 +117,9 @@ def _mark(state: str, purpose: str) -> str:
 
 
 def _names(job: Job, role: str) -> str:
-    return ", ".join(person.name for person in job.acting(role))
+    # A name in a title block reads as a signature; until there is one, the block says that there is none.
+    names = ", ".join(person.name for person in job.acting(role))
+    return f"{names}, unsigned" if names else ""
 
 
 def _register(entries: Iterable[Entry]) -> list[dict[str, Any]]:

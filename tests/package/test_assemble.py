@@ -93,7 +93,9 @@ def test_the_cover(model: dict[str, Any]) -> None:
         "number": "26-044", "title": "Cold store at Marl Hythe", "location": "Marl Hythe", "client": "Hythe Growers",
         "firm": "Quill and Ashby", "document": "",
     }  # fmt: skip
-    assert (model["originators"], model["checkers"]) == ("N. D. Ambrey, Q. R. Sand", "Q. R. Sand")
+    assert (model["originators"], model["checkers"]) == (
+        "N. D. Ambrey, Q. R. Sand, unsigned", "Q. R. Sand, unsigned",
+    )  # fmt: skip
     assert (model["open_count"], model["assumed_count"]) == (2, 1)
     assert [item["kind"] for item in model["open"]] == ["assumed", "ratio", "output"]
     assert model["revision"] == {
