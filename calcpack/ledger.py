@@ -1,9 +1,10 @@
 """The ledger: every value a package states, where it comes from, and what it goes into.
 
 An entry is a *given* (a value with its source), a *worked* value (an expression over other entries), a *solved*
-value (found by iteration, confirmed by worked entries) or a *verdict*. Entries form an acyclic graph. The hash of
-an entry covers its own content, without its id, sheet and printed form, and the hashes of the entries it rests on,
-so a change shows in exactly the entries that depend on it.
+value (found by iteration from other entries, and confirmed by worked entries that come after it) or a *verdict*.
+Entries form an acyclic graph: a solved value rests on what it was solved from, and what confirms it rests on it. The
+hash of an entry covers its own content, without its id, sheet and printed form, and the hashes of the entries it rests
+on, so a change shows in exactly the entries that depend on it.
 """
 
 from __future__ import annotations
@@ -12,7 +13,7 @@ import hashlib
 import json
 import math
 from collections.abc import Iterable, Iterator, Mapping
-from dataclasses import dataclass, field, fields
+from dataclasses import dataclass, field, fields, replace
 from typing import Any
 
 from calcpack import expression
@@ -24,11 +25,12 @@ KINDS = ("given", "worked", "solved", "verdict")
 _OF_KIND: dict[str, tuple[str, ...]] = {
     "given": ("source", "status"),
     "worked": ("clause", "edition", "expression", "where", "condition", "formula"),
-    "solved": ("clause", "edition", "method", "confirmed_by"),
+    "solved": ("clause", "edition", "method", "solved_from", "confirmed_by"),
     "verdict": ("clause", "edition", "demand", "capacity", "ratio", "verdict"),
 }
 _COMMON = ("id", "kind", "symbol", "means", "value", "unit", "shown", "sheet")
 _OPTIONAL = ("condition", "formula", "edition")
+_LISTS = ("solved_from", "confirmed_by")
 _HASHED_AS_TEXT = (
     "kind",
     "symbol",
@@ -44,6 +46,8 @@ _HASHED_AS_TEXT = (
 _TOLERANCE = 1e-9
 # A ratio that exceeds 1 by the noise of binary arithmetic alone is not a failure.
 _SLACK = 1e-9
+# A difference that confirms a solved value, as a ratio, is at most this.
+_VANISHES = 1e-6
 
 
 @dataclass(frozen=True)
@@ -67,6 +71,7 @@ class Entry:
     condition: str = ""
     formula: str = ""
     method: str = ""
+    solved_from: tuple[str, ...] = ()
     confirmed_by: tuple[str, ...] = ()
     demand: str = ""
     capacity: str = ""
@@ -75,14 +80,14 @@ class Entry:
 
     def rests_on(self) -> tuple[str, ...]:
         """Ids of the entries this one was made from, each once, in order."""
-        ids = [*self.where.values(), *self.confirmed_by, *filter(None, (self.demand, self.capacity))]
+        ids = [*self.where.values(), *self.solved_from, *filter(None, (self.demand, self.capacity))]
         return tuple(dict.fromkeys(ids))
 
     def to_json(self) -> dict[str, Any]:
         """The entry as plain data, with the fields of its kind."""
         data: dict[str, Any] = {name: getattr(self, name) for name in (*_COMMON, *_OF_KIND[self.kind])}
         data = {name: value for name, value in data.items() if value or name not in _OPTIONAL}
-        for name in ("where", "confirmed_by"):
+        for name in ("where", *_LISTS):
             if name in data:
                 data[name] = dict(data[name]) if name == "where" else list(data[name])
         return data
@@ -107,7 +112,7 @@ class Entry:
         wrong = [f"{name} = {value!r}" for name, value in values.items() if not _fits(name, value)]
         if wrong:
             raise LedgerError(f"entry {data.get('id')!r}: {', '.join(wrong)} is not what a ledger holds there")
-        return cls(**{**values, "confirmed_by": tuple(values.get("confirmed_by", ()))})
+        return cls(**{**values, **{name: tuple(values.get(name, ())) for name in _LISTS}})
 
 
 def _fits(name: str, value: Any) -> bool:
@@ -115,7 +120,7 @@ def _fits(name: str, value: Any) -> bool:
         return (isinstance(value, (int, float)) and not isinstance(value, bool)) or (name == "ratio" and value is None)
     if name == "where":
         return isinstance(value, Mapping) and all(isinstance(item, str) for item in value.values())
-    if name == "confirmed_by":
+    if name in _LISTS:
         return isinstance(value, (list, tuple)) and all(isinstance(item, str) for item in value)
     return isinstance(value, str)
 
@@ -167,6 +172,21 @@ class Ledger:
         for identifier in entry.rests_on():
             self._users.setdefault(identifier, []).append(entry.id)
 
+    def confirm(self, identifier: str, by: Iterable[str]) -> Entry:
+        """Note the entries by which a hand confirms a solved value, and return the entry that says so.
+
+        Raises
+        ------
+        LedgerError : it is no solved value, or an entry does not rest on it, so that it cannot confirm it
+        """
+        entry = self[identifier]
+        if entry.kind != "solved":
+            raise LedgerError(f"{identifier} is {entry.kind}: only a solved value is confirmed by others")
+        confirmed = replace(entry, confirmed_by=tuple(dict.fromkeys((*entry.confirmed_by, *by))))
+        _refuse_unconfirming(self, confirmed)
+        self._entries[identifier] = confirmed
+        return confirmed
+
     def admit(self, identifier: str, digest: str) -> None:
         """Let entries rest on an entry of another sheet, known by its hash alone."""
         self._hashes[identifier] = digest
@@ -217,6 +237,8 @@ class Ledger:
             raise LedgerError("the ledger holds an id twice")
         _refuse_cycles(entries)
         ledger = cls(_in_order(entries))
+        for entry in ledger:
+            _refuse_unconfirming(ledger, entry)
         for item in data:
             if item.get("hash") not in (None, ledger.hash(item["id"])):
                 raise LedgerError(f"{item['id']}: its hash does not fit its content; the ledger was changed by hand")
@@ -245,6 +267,12 @@ class Ledger:
 def passes(ratio: float) -> bool:
     """Whether a ratio of demand to capacity is at most 1."""
     return ratio <= 1.0 + _SLACK
+
+
+def _refuse_unconfirming(ledger: Ledger, entry: Entry) -> None:
+    for identifier in entry.confirmed_by:
+        if identifier not in ledger or entry.id not in ledger.below(identifier):
+            raise LedgerError(f"{entry.id} is confirmed by {identifier}, which does not rest on it")
 
 
 def _refuse_cycles(entries: Mapping[str, Entry]) -> None:
@@ -304,7 +332,8 @@ def replay(data: Iterable[Mapping[str, Any]]) -> list[Replayed]:
     """Work every line of a ledger again from its printed expressions alone, without any formula of calcpack.
 
     Each line is evaluated from the values that its own inputs *replay* to, so one wrong number shows in everything
-    above it. Verdicts are compared with the quotient of their demand and capacity.
+    above it. Verdicts are compared with the quotient of their demand and capacity; a difference that confirms a solved
+    value has to vanish.
 
     Raises
     ------
@@ -319,7 +348,15 @@ def replay(data: Iterable[Mapping[str, Any]]) -> list[Replayed]:
             done += _replayed(entry, values)
         except FormulaError as error:
             raise LedgerError(f"{entry.id}: {error}") from error
-    return done
+    return [*done, *_confirmed(ledger, values)]
+
+
+def _confirmed(ledger: Ledger, values: Mapping[str, float]) -> Iterator[Replayed]:
+    for entry in ledger:
+        for identifier in entry.confirmed_by:
+            if ledger[identifier].unit == "":
+                vanishes = abs(values[identifier]) <= _VANISHES
+                yield Replayed(entry.id, f"confirmed by {identifier}", 1.0, float(vanishes))
 
 
 def _replayed(entry: Entry, values: dict[str, float]) -> Iterator[Replayed]:

@@ -8,9 +8,9 @@ from pathlib import Path
 from typing import TYPE_CHECKING, Any
 
 from calcpack import notebook, symbols
-from calcpack.book import SheetBook
 from calcpack.errors import Problem, SheetError
 from calcpack.formula import Formula
+from calcpack.solving import Solving
 from calcpack.units import Measured, convert, display_unit
 from calcpack.value import Value
 
@@ -21,7 +21,7 @@ if TYPE_CHECKING:
 __all__ = ["Scheduled"]
 
 
-class Scheduled(SheetBook):
+class Scheduled(Solving):
     """What a sheet prints of the schedules; `calcpack.sheet.Sheet` adds what an author writes line by line."""
 
     _job: Job

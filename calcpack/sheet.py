@@ -19,7 +19,7 @@ from calcpack.ledger import Entry, passes
 from calcpack.scheduled import Scheduled
 from calcpack.typeset.line import Origin, printed_lines, with_unit
 from calcpack.typeset.store import LayoutStore
-from calcpack.units import RATIO, Measured, coherent_unit, read
+from calcpack.units import RATIO, Measured, coherent_unit
 from calcpack.value import Value, ratio_text, shown_text
 
 if TYPE_CHECKING:
@@ -209,45 +209,7 @@ class Sheet(Scheduled):
         )  # fmt: skip
         return value
 
-    def solved(
-        self, symbol: str, value: object, means: str, *, method: str, clause: str, confirmed_by: Sequence[Value]
-    ) -> Value:
-        """A value found by iteration, with the worked values by which a hand confirms it.
-
-        Raises
-        ------
-        SheetError : no method, or nothing that confirms it
-        """
-        loose = ", ".join(repr(item) for item in confirmed_by if not isinstance(item, Value))
-        if not method.strip() or not confirmed_by or loose:
-            found = f"{symbol}: method {method!r}, confirmed by {loose or len(confirmed_by)}"
-            problem = Problem(found, "a method, and values of the ledger by which a hand confirms it", "")
-            raise SheetError("solved value", [problem], self._place())
-        measured = self._measured(symbol, value)
-        self._begin()
-        identifier, shown = self._free_ids([symbol])[0], shown_text(measured.value, measured.dimension)
-        entry = Entry(
-            identifier, "solved", symbol, means, measured.value, coherent_unit(measured.dimension), shown, self.id,
-            clause=clause, method=method, confirmed_by=tuple(item.entry.id for item in confirmed_by),
-        )  # fmt: skip
-        kept = self._keep(entry, measured.dimension)
-        source = f"{method}; confirmed by {', '.join(item.entry.symbol for item in confirmed_by)}"
-        self._show(
-            "given", [entry], id=identifier, symbol=symbol, means=means, shown=shown, source=source, status="confirmed"
-        )
-        return kept
-
     # What follows is how the above is done.
-
-    def _measured(self, symbol: str, value: object, unit: str = "") -> Measured:
-        dimension = symbols.lookup(symbol).dimension if symbols.is_known(symbol) else None
-        try:
-            measured = read(value, dimension, symbol)
-            if unit:
-                read(f"1 {unit}", measured.dimension, f"unit of {symbol}")
-        except InputError as error:
-            raise error.at(self._place()) from None
-        return measured
 
     def _listed(self, symbol: str) -> Value:
         from calcpack.job import row_digest

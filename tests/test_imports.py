@@ -28,6 +28,7 @@ LAYERS: list[set[str]] = [
     {"notebook"},
     {"value"},
     {"carrying", "book", "validation"},
+    {"solving"},
     {"scheduled"},
     {"sheet"},
     {"package"},

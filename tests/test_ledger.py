@@ -34,10 +34,10 @@ def worked(identifier: str, expression: str, where: dict[str, str], value: float
     return Entry(identifier, "worked", symbol, value=value, expression=expression, where=where, **{**fields, **more})
 
 
-def solved(identifier: str, value: float, confirmed_by: tuple[str, ...], **more: Any) -> Entry:
+def solved(identifier: str, value: float, solved_from: tuple[str, ...], **more: Any) -> Entry:
     fields = {"means": "neutral axis", "unit": "in", "shown": "5 in", "sheet": "S", "clause": "22.2", "edition": "x"}
     return Entry(
-        identifier, "solved", "c", value=value, method="bisection", confirmed_by=confirmed_by, **{**fields, **more}
+        identifier, "solved", "c", value=value, method="bisection", solved_from=solved_from, **{**fields, **more}
     )
 
 
@@ -196,7 +196,7 @@ def test_ids_are_no_content() -> None:
             entry,
             id=renamed(entry.id),
             where={symbol: renamed(name) for symbol, name in entry.where.items()},
-            confirmed_by=tuple(map(renamed, entry.confirmed_by)),
+            solved_from=tuple(map(renamed, entry.solved_from)),
             demand=entry.demand and renamed(entry.demand),
             capacity=entry.capacity and renamed(entry.capacity),
         )
@@ -284,7 +284,7 @@ def test_json_holds_the_keys_of_the_contract() -> None:
     assert data["S/a"] == {"source", "status"}
     assert data["S/c"] == {"clause", "edition", "expression", "where"}
     assert data["S/d"] == {"clause", "edition", "expression", "where", "condition"}
-    assert data["S/e"] == {"clause", "edition", "method", "confirmed_by"}
+    assert data["S/e"] == {"clause", "edition", "method", "solved_from", "confirmed_by"}
     assert data["S/v"] == {"clause", "edition", "demand", "capacity", "ratio", "verdict"}
     assert KINDS == ("given", "worked", "solved", "verdict")
 
@@ -326,7 +326,7 @@ def test_a_longer_chain_than_python_recurses_is_read() -> None:
         (2, "expression", "a*b*1"),
         (2, "value", 7.0),
         (3, "condition", "c >= a"),
-        (4, "confirmed_by", ["S/c"]),
+        (4, "solved_from", ["S/c"]),
         (5, "verdict", "NG"),
         (5, "ratio", 0.5),
         (5, "hash", "0" * 64),
@@ -436,6 +436,7 @@ def test_unknown_keys_are_left_aside() -> None:
         (2, "where", {"a": 1}, r"where = \{'a': 1\} is not"),
         (2, "expression", None, "expression = None is not"),
         (4, "confirmed_by", "S/d", "confirmed_by = 'S/d' is not"),
+        (4, "solved_from", "S/d", "solved_from = 'S/d' is not"),
         (5, "ratio", "0.5", "ratio = '0.5' is not"),
     ],
 )
@@ -467,3 +468,43 @@ def test_an_entry_is_an_object(item: Any) -> None:
 )
 def test_passes_up_to_one_and_the_noise_of_arithmetic(ratio: float, ok: bool) -> None:
     assert passes(ratio) is ok
+
+
+def iterated(difference: float = 0.0) -> list[Entry]:
+    """A root found by iteration, and the difference that confirms it."""
+    return [
+        given_entry("S/a", "a", 9.0),
+        solved("S/c", 3.0, ("S/a",)),
+        worked("S/e", "(a - c**2)/a", {"a": "S/a", "c": "S/c"}, difference, unit=""),
+    ]
+
+
+def test_what_confirms_a_solved_value_comes_after_it_and_is_no_part_of_its_hash() -> None:
+    ledger = Ledger(iterated())
+    before = ledger.hash("S/c")
+    assert ledger.confirm("S/c", ["S/e", "S/e"]).confirmed_by == ("S/e",)
+    assert (ledger["S/c"].confirmed_by, ledger.hash("S/c")) == (("S/e",), before)
+    assert ledger.below("S/c") == {"S/a"}
+    again = Ledger.from_json(ledger.to_json())
+    assert again["S/c"].confirmed_by == ("S/e",)
+
+
+@pytest.mark.parametrize(
+    ("name", "by", "message"),
+    [
+        ("S/a", "S/e", "S/a is given: only a solved value is confirmed by others"),
+        ("S/c", "S/a", "S/c is confirmed by S/a, which does not rest on it"),
+        ("S/c", "S/z", "S/c is confirmed by S/z, which does not rest on it"),
+        ("S/z", "S/e", "no entry 'S/z' in the ledger"),
+    ],
+)
+def test_what_cannot_confirm_is_refused(name: str, by: str, message: str) -> None:
+    with pytest.raises(LedgerError, match=message):
+        Ledger(iterated()).confirm(name, [by])
+
+
+def test_a_file_in_which_something_else_confirms_is_refused() -> None:
+    data = Ledger(iterated()).to_json()
+    data[1]["confirmed_by"] = ["S/a"]
+    with pytest.raises(LedgerError, match="S/c is confirmed by S/a, which does not rest on it"):
+        Ledger.from_json(data)

@@ -179,17 +179,19 @@ def test_replay_looks_at_content_and_not_at_hashes() -> None:
     assert wrong(changed("S/P_n", hash="0" * 64)) == []
 
 
-def test_a_solved_value_is_taken_as_stated_and_confirmed_by_its_lines() -> None:
+@pytest.mark.parametrize(("root", "agrees"), [(3.0, True), (3.0 + 2e-7, True), (3.0 + 2e-6, False)])
+def test_a_solved_value_is_taken_as_stated_and_confirmed_by_its_lines(root: float, agrees: bool) -> None:
     ledger = Ledger(
         [
-            entry("S/a", "given", 2.0, source="x", status="confirmed"),
-            entry("S/r", "worked", 0.0, expression="a - 2", where={"a": "S/a"}),
-            entry("S/c", "solved", 5.1, method="bisection", confirmed_by=("S/r",)),
-            entry("S/t", "worked", 10.2, expression="2*c", where={"c": "S/c"}),
+            entry("S/a", "given", 9.0, source="x", status="confirmed"),
+            entry("S/c", "solved", root, method="bisection", solved_from=("S/a",)),
+            entry("S/e", "worked", 1 - root**2 / 9, unit="", expression="1 - c**2/a", where={"c": "S/c", "a": "S/a"}),
+            entry("S/t", "worked", 2 * root, expression="2*c", where={"c": "S/c"}),
         ]
     )
-    assert [one.id for one in replay(ledger.to_json())] == ["S/r", "S/t"]
-    assert wrong(ledger.to_json()) == []
+    ledger.confirm("S/c", ["S/e"])
+    assert [one.what for one in replay(ledger.to_json())] == ["1 - c**2/a", "2*c", "confirmed by S/e"]
+    assert [what[0] for what in wrong(ledger.to_json())] == ["S/c"] * (not agrees)
 
 
 @pytest.mark.parametrize(

@@ -15,7 +15,7 @@ from calcpack.carrying import leave, results_folder
 from calcpack.errors import LayoutError, LedgerError, NeedsSheet, RangeError, SheetError, TableError, UnitError
 from calcpack.formula import Limit, Standard, formula
 from calcpack.ledger import replay
-from calcpack.units import Area, Length
+from calcpack.units import Area, Length, Ratio
 from calcpack.value import Value
 
 SOURCE = "S-001, note 4, rev 2"
@@ -489,36 +489,56 @@ def test_a_sheet_that_has_not_run(sheet: Sheet) -> None:
 # Solved values
 
 
-def test_a_solved_value_names_what_confirms_it(column: Sheet, shown: Shown) -> None:
-    total = column.work(axial)
-    value = column.solved(
-        "c",
-        "7.25 in",
-        "neutral axis depth",
-        method="bisection on the sum of forces",
-        clause="22.2",
-        confirmed_by=[total],
+@formula("continuity")
+def root_error(*, A_g: Area, D_c: Length) -> Ratio:
+    """Difference of an area and the square of a length, over the area."""
+    gap = (A_g - D_c**2) / A_g
+    return gap
+
+
+def test_a_solved_value_and_what_confirms_it(column: Sheet, shown: Shown) -> None:
+    (area,) = column.values("A_g")
+    side = column.solved(
+        "D_c", f"{float(area) ** 0.5!r} in", "side", method="bisection", clause="22.2", solved_from=[area, area]
     )
-    assert (value.entry.kind, value.entry.confirmed_by, value.entry.shown) == ("solved", ("C-01/P_o",), "7.25 in")
-    assert shown.last["source"] == "bisection on the sum of forces; confirmed by P_o"
+    assert (side.entry.kind, side.entry.solved_from) == ("solved", ("C-01/A_g",))
+    assert shown.last["source"] == "bisection; confirmed below"
+    gap = column.work(root_error, D_c=side)
+    column.confirm([side], [gap])
+    assert column.ledger["C-01/D_c"].confirmed_by == ("C-01/gap",)
+    assert shown.last["confirms"] == [["C-01/D_c", ["C-01/gap"]]]
+    assert [one for one in replay(column.ledger.to_json()) if not one.agrees] == []
 
 
-@pytest.mark.parametrize(("method", "confirmed"), [("", True), (" ", True), ("bisection", False)])
-def test_a_solved_value_without_evidence(column: Sheet, method: str, confirmed: bool) -> None:
-    evidence = [column.values("f_c")[0]] * confirmed
-    with pytest.raises(SheetError, match="a method, and values of the ledger by which a hand confirms it"):
-        column.solved("c", "7 in", "depth", method=method, clause="22.2", confirmed_by=evidence)
+def test_what_does_not_vanish_confirms_nothing(column: Sheet) -> None:
+    (area,) = column.values("A_g")
+    side = column.solved("D_c", "7 in", "side", method="bisection", clause="22.2", solved_from=[area])
+    other = column.solved("h", "7 in", "side", method="bisection", clause="22.2", solved_from=[area])
+    gap = column.work(root_error, D_c=side)
+    with pytest.raises(SheetError, match=r"gap = .* = [\d.]+ +a ratio of at most 1e-06(.|\n)*does not rest on C-01/h"):
+        column.confirm([side, other], [gap])
+    with pytest.raises(SheetError, match=r"A_g = .* +a value made by sheet.solved"):
+        column.confirm([area], [gap])
+    with pytest.raises(SheetError, match="nothing that confirms it"):
+        column.confirm([side], [])
+
+
+@pytest.mark.parametrize(("method", "known"), [("", True), (" ", True), ("bisection", False)])
+def test_a_solved_value_without_method_or_origin(column: Sheet, method: str, known: bool) -> None:
+    origin = [column.values("f_c")[0]] * known
+    with pytest.raises(SheetError, match="a method, and the values of the ledger that it was found from"):
+        column.solved("c", "7 in", "depth", method=method, clause="22.2", solved_from=origin)
 
 
 def test_a_solved_value_with_a_wrong_unit_names_the_sheet(column: Sheet) -> None:
     with pytest.raises(UnitError, match=r"sheet C-01$"):
-        column.solved("d_b", "7 psi", "depth", method="bisection", clause="22", confirmed_by=[column.values("f_c")[0]])
+        column.solved("d_b", "7 psi", "depth", method="bisection", clause="22", solved_from=[column.values("f_c")[0]])
 
 
-def test_a_solved_value_is_not_confirmed_by_a_number(column: Sheet) -> None:
-    evidence: Any = [0.0]
-    with pytest.raises(SheetError, match=r"confirmed by 0\.0 +a method, and values of the ledger"):
-        column.solved("c", "7 in", "depth", method="bisection", clause="22", confirmed_by=evidence)
+def test_a_solved_value_is_not_solved_from_a_number(column: Sheet) -> None:
+    origin: Any = [0.0]
+    with pytest.raises(SheetError, match=r"solved from 0\.0 +a method, and the values"):
+        column.solved("c", "7 in", "depth", method="bisection", clause="22", solved_from=origin)
 
 
 # A line that cannot be printed

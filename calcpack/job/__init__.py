@@ -7,10 +7,12 @@ from calcpack.job.givens import GivenValue, read_givens
 from calcpack.job.schedules import (
     ColumnRow,
     ForceRow,
+    StoryRow,
     Termination,
     match,
     read_columns,
     read_forces,
+    read_stories,
     read_terminations,
 )
 from calcpack.job.tables import Column, Row, Table, read_table
@@ -29,6 +31,7 @@ __all__ = [
     "Person",
     "Revision",
     "Row",
+    "StoryRow",
     "Table",
     "Termination",
     "Transverse",
@@ -38,6 +41,7 @@ __all__ = [
     "read_columns",
     "read_forces",
     "read_givens",
+    "read_stories",
     "read_table",
     "read_terminations",
     "row_digest",

@@ -6,7 +6,7 @@ from dataclasses import dataclass
 
 from calcpack.job.bars import BarLayout, Transverse
 
-__all__ = ["ColumnRow", "ForceRow", "Termination"]
+__all__ = ["ColumnRow", "ForceRow", "StoryRow", "Termination"]
 
 
 class _Placed:
@@ -61,7 +61,8 @@ class Termination(_Placed):
 class ColumnRow(_Placed):
     """A column of the schedule; lengths in, stresses psi. A circular one has no `b`, and `h` is its diameter.
 
-    `l_u` is ``None`` where only the section is checked; `frame` where the table does not say.
+    `l_u` is ``None`` where only the section is checked; ``None`` elsewhere is what the table leaves empty. `psi` are
+    the stiffnesses of columns over those of beams at the ends, `legs` the legs of ties parallel to an axis.
     """
 
     mark: str
@@ -75,11 +76,39 @@ class ColumnRow(_Placed):
     f_y: float
     f_yt: float | None
     l_u: float | None
-    k_x: float
-    k_y: float
+    k_x: float | None
+    k_y: float | None
     frame: str | None
     lamb: float
     aggregate: float | None
+    psi_x_bottom: float | None
+    psi_x_top: float | None
+    psi_y_bottom: float | None
+    psi_y_top: float | None
+    beta_dns: float | None
+    delta_s: float | None
+    story: str
+    seismic: str
+    legs_x: int
+    legs_y: int
+    ties_beyond: Transverse | None
+    group: str
+    source: str
+    row: int
+    file: str
+
+
+@dataclass(frozen=True)
+class StoryRow(_Placed):
+    """A story of a sway frame in one combination, or in every one where `combination` is empty; lb and in."""
+
+    story: str
+    combination: str
+    sum_P_u: float
+    V_us: float
+    Delta_o: float
+    l_c: float
+    sum_P_c: float | None
     source: str
     row: int
     file: str
@@ -96,6 +125,7 @@ class ForceRow(_Placed):
     mark: str
     combination: str | None
     load: str | None
+    case: str
     P: float
     Mx: float | None
     My: float | None

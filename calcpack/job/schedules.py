@@ -13,7 +13,7 @@ from typing import Any, TypeVar
 from calcpack.errors import Problem, TableError
 from calcpack.job.bars import Transverse, bar_size, parse_layout, parse_transverse
 from calcpack.job.givens import GivenValue, read_givens
-from calcpack.job.records import ColumnRow, ForceRow, Termination
+from calcpack.job.records import ColumnRow, ForceRow, StoryRow, Termination
 from calcpack.job.tables import Column, Row, Rule, Table, read_table, repeated, yes_no
 from calcpack.job.wording import did_you_mean, failure, shown
 from calcpack.units import AREA, FORCE, LENGTH, MOMENT, RATIO, STRESS
@@ -25,11 +25,13 @@ __all__ = [
     "ColumnRow",
     "ForceRow",
     "GivenValue",
+    "StoryRow",
     "Termination",
     "match",
     "read_columns",
     "read_forces",
     "read_givens",
+    "read_stories",
     "read_terminations",
 ]
 
@@ -60,6 +62,12 @@ def _stress(symbol: str, required: bool = True) -> Column:
 
 def _yes(symbol: str) -> Column:
     return Column(symbol, default=False, parse=yes_no, allowed="yes or no")
+
+
+def _legs(text: str) -> int:
+    if not text.isdecimal() or int(text) < 2:
+        raise ValueError("hoops and crossties together have at least the two legs of the hoop")
+    return int(text)
 
 
 _MARK = Column("mark", required=True)
@@ -101,11 +109,20 @@ _COLUMN = (
     _stress("f_y"),
     _stress("f_yt", required=False),
     _length("l_u"),
-    Column("k_x", RATIO, default=1.0, above=0),
-    Column("k_y", RATIO, default=1.0, above=0),
+    Column("k_x", RATIO, above=0),
+    Column("k_y", RATIO, above=0),
     Column("frame", choices=("nonsway", "sway")),
     _LAMBDA,
     _length("aggregate"),
+    *(Column(f"psi_{axis}_{end}", RATIO, least=0) for axis in "xy" for end in ("bottom", "top")),
+    Column("beta_dns", RATIO, least=0),
+    Column("delta_s", RATIO, least=1),
+    Column("story", default=""),
+    Column("seismic", default="none", choices=("none", "special")),
+    Column("legs_x", default=2, parse=_legs, allowed="a number of legs, 2 or more"),
+    Column("legs_y", default=2, parse=_legs, allowed="a number of legs, 2 or more"),
+    Column("ties_beyond", parse=parse_transverse, allowed="ties beyond the length l_o, e.g. '#4@6'"),
+    Column("group", default=""),
     _SOURCE,
 )
 
@@ -114,6 +131,7 @@ _FORCE = (
     _MARK,
     Column("combination"),
     Column("load", choices=LOADS),
+    Column("case", default=""),
     Column("P", FORCE, required=True),
     *(Column(symbol, MOMENT) for symbol in _MOMENTS),
     Column("Vx", FORCE, default=0.0),
@@ -121,7 +139,19 @@ _FORCE = (
     Column("T", MOMENT, default=0.0),
 )
 
-_Record = TypeVar("_Record", Termination, ColumnRow, ForceRow)
+_Record = TypeVar("_Record", Termination, ColumnRow, ForceRow, StoryRow)
+
+
+_STORY = (
+    Column("story", required=True),
+    Column("combination", default=""),
+    Column("sum_P_u", FORCE, required=True, above=0),
+    Column("V_us", FORCE, required=True, above=0),
+    Column("Delta_o", LENGTH, required=True, above=0),
+    Column("l_c", LENGTH, required=True, above=0),
+    Column("sum_P_c", FORCE, above=0),
+    _SOURCE,
+)
 
 
 def _record(kind: type[_Record], row: Row, **changed: Any) -> _Record:
@@ -174,7 +204,10 @@ def read_columns(job_root: Path) -> tuple[ColumnRow, ...]:
 
 def _column(row: Row) -> ColumnRow:
     ties: Transverse = row.values["ties"]
-    return _record(ColumnRow, row, ties=replace(ties, spacing=ties.spacing * row.sizes["cover"]))
+    beyond: Transverse | None = row.values["ties_beyond"]
+    size = row.sizes["cover"]
+    scaled = beyond and replace(beyond, spacing=beyond.spacing * size)
+    return _record(ColumnRow, row, ties=replace(ties, spacing=ties.spacing * size), ties_beyond=scaled)
 
 
 def _column_rule(table: Table) -> Iterator[Problem]:
@@ -199,6 +232,25 @@ def read_forces(job_root: Path) -> tuple[ForceRow, ...]:
     TableError : everything that is wrong in the file
     """
     return _records(job_root, "forces", _FORCE, _force_rule, lambda row: _record(ForceRow, row))
+
+
+def read_stories(job_root: Path) -> tuple[StoryRow, ...]:
+    """The stories of inputs/stories, in file order; none where the file is absent.
+
+    Raises
+    ------
+    TableError : everything that is wrong in the file
+    """
+    return _records(job_root, "stories", _STORY, _story_rule, lambda row: _record(StoryRow, row))
+
+
+def _story_rule(table: Table) -> Iterator[Problem]:
+    seen: dict[tuple[Any, Any], Row] = {}
+    for row in table.rows:
+        key = row.values.get("story"), row.values.get("combination")
+        if key in seen:
+            yield row.problem(f"story {key[0]!r} twice for one combination", "one row each", "remove one")
+        seen[key] = row
 
 
 def _force_rule(table: Table) -> Iterator[Problem]:

@@ -1,10 +1,11 @@
-"""What the checks of columns read: one row of the column schedule and its forces."""
+"""What the checks of columns read: one row of the column schedule, its forces and its story."""
 
 from __future__ import annotations
 
 from dataclasses import dataclass
-from typing import Protocol
+from typing import Any
 
+from calcpack.members.column_like import BarsLike, ColumnLike, ForceLike, StoryLike, TiesLike
 from calcpack.members.sources import position, source_text
 
 __all__ = [
@@ -14,178 +15,16 @@ __all__ = [
     "ColumnLike",
     "Force",
     "ForceLike",
+    "Story",
+    "StoryLike",
+    "Sway",
+    "Term",
     "Ties",
     "TiesLike",
     "force_source",
     "row_of",
     "section_source",
 ]
-
-
-class BarsLike(Protocol):
-    """The longitudinal bars of a column."""
-
-    @property
-    def count(self) -> int:
-        """How many."""
-        ...
-
-    @property
-    def size(self) -> int:
-        """Designation number."""
-        ...
-
-    @property
-    def n_x(self) -> int | None:
-        """Along each face parallel to x, corners included; None on a circle."""
-        ...
-
-    @property
-    def n_y(self) -> int | None:
-        """Along each face parallel to y, corners included; None on a circle."""
-        ...
-
-
-class TiesLike(Protocol):
-    """The ties or the spiral of a column."""
-
-    @property
-    def kind(self) -> str:
-        """``ties`` or ``spiral``."""
-        ...
-
-    @property
-    def size(self) -> int:
-        """Designation number."""
-        ...
-
-    @property
-    def spacing(self) -> float:
-        """Centre to centre, or pitch, in."""
-        ...
-
-
-class ColumnLike(Protocol):
-    """A column of the schedule, in coherent units."""
-
-    @property
-    def mark(self) -> str:
-        """Mark of the column."""
-        ...
-
-    @property
-    def b(self) -> float | None:
-        """Width along x, in; None in a circular column."""
-        ...
-
-    @property
-    def h(self) -> float:
-        """Depth along y, or diameter, in."""
-        ...
-
-    @property
-    def bars(self) -> BarsLike:
-        """Longitudinal bars."""
-        ...
-
-    @property
-    def ties(self) -> TiesLike:
-        """Ties or spiral."""
-        ...
-
-    @property
-    def cover(self) -> float:
-        """Clear, to ties or spiral, in."""
-        ...
-
-    @property
-    def f_c(self) -> float:
-        """In psi."""
-        ...
-
-    @property
-    def f_y(self) -> float:
-        """In psi."""
-        ...
-
-    @property
-    def f_yt(self) -> float | None:
-        """In psi; None where it is f_y."""
-        ...
-
-    @property
-    def aggregate(self) -> float | None:
-        """Nominal maximum size, in."""
-        ...
-
-    @property
-    def l_u(self) -> float | None:
-        """Unsupported length, in."""
-        ...
-
-    @property
-    def source(self) -> str:
-        """Drawing and revision that the row states; may be empty."""
-        ...
-
-    @property
-    def file(self) -> str:
-        """Where the row stands."""
-        ...
-
-    @property
-    def row(self) -> int:
-        """Its number in the file."""
-        ...
-
-
-class ForceLike(Protocol):
-    """Factored forces of one combination, in lb and lb*in, compression positive."""
-
-    @property
-    def combination(self) -> str | None:
-        """Name of the combination."""
-        ...
-
-    @property
-    def P(self) -> float:
-        """Axial force."""
-        ...
-
-    @property
-    def Mx(self) -> float | None:
-        """Moment about x; None where it is given by its ends."""
-        ...
-
-    @property
-    def My(self) -> float | None:
-        """Moment about y; None where it is given by its ends."""
-        ...
-
-    @property
-    def Vx(self) -> float:
-        """Shear along x."""
-        ...
-
-    @property
-    def Vy(self) -> float:
-        """Shear along y."""
-        ...
-
-    @property
-    def T(self) -> float:
-        """Torsion."""
-        ...
-
-    @property
-    def file(self) -> str:
-        """Where the row stands."""
-        ...
-
-    @property
-    def row(self) -> int:
-        """Its number in the file."""
-        ...
 
 
 @dataclass(frozen=True)
@@ -222,22 +61,87 @@ class Column:
     f_yt: float | None = None
     aggregate: float | None = None
     l_u: float | None = None
+    k_x: float | None = None
+    k_y: float | None = None
+    frame: str | None = None
+    lamb: float = 1.0
+    psi_x_bottom: float | None = None
+    psi_x_top: float | None = None
+    psi_y_bottom: float | None = None
+    psi_y_top: float | None = None
+    beta_dns: float | None = None
+    delta_s: float | None = None
+    story: str = ""
+    seismic: str = "none"
+    legs_x: int = 2
+    legs_y: int = 2
+    ties_beyond: Ties | None = None
+    group: str = ""
     source: str = ""
     file: str = ""
     row: int = 0
 
 
 @dataclass(frozen=True)
+class Sway:
+    """The part of factored moments that wind and earthquake cause, at both ends, lb*in."""
+
+    Mx_bottom: float = 0.0
+    Mx_top: float = 0.0
+    My_bottom: float = 0.0
+    My_top: float = 0.0
+
+
+@dataclass(frozen=True)
+class Term:
+    """A load and its factor in a combination; `row` is the unfactored row of the force table."""
+
+    factor: float
+    load: str
+    row: Any
+
+
+@dataclass(frozen=True)
 class Force:
-    """Factored forces of one combination; fields as in `ForceLike`."""
+    """Factored forces of one combination; fields as in `ForceLike`.
+
+    Attributes
+    ----------
+    terms : how the combination was formed; empty where the table gives factored forces
+    P_sustained : factored sustained axial force, where the combination was formed
+    sway : what wind and earthquake contribute to the moments, where the combination was formed
+    """
 
     combination: str | None
     P: float
     Mx: float | None = 0.0
     My: float | None = 0.0
+    Mx_bottom: float | None = None
+    Mx_top: float | None = None
+    My_bottom: float | None = None
+    My_top: float | None = None
+    terms: tuple[Term, ...] = ()
+    P_sustained: float | None = None
+    sway: Sway | None = None
     Vx: float = 0.0
     Vy: float = 0.0
     T: float = 0.0
+    file: str = ""
+    row: int = 0
+
+
+@dataclass(frozen=True)
+class Story:
+    """A story of a sway frame; fields as in `StoryLike`."""
+
+    story: str
+    sum_P_u: float
+    V_us: float
+    Delta_o: float
+    l_c: float
+    sum_P_c: float | None = None
+    combination: str = ""
+    source: str = ""
     file: str = ""
     row: int = 0
 

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import hashlib
 from collections.abc import Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from typing import Any
 
 from calcpack.items import stored_items
@@ -57,11 +57,14 @@ def collect(executed: Sequence[Executed]) -> Content:
     LedgerError : an id twice, a reference to nothing, a circular reference
     """
     sheets, entries = [], []
+    confirmed: dict[str, list[str]] = {}
     for run in executed:
         subject = ""
         for item in stored_items(run.notebook):
             if item["type"] == "sheet":
                 subject = item["subject"]
             entries += [Entry.from_json(data) for data in item["entries"]]
+            confirmed.update(dict(item.get("confirms", ())))
         sheets.append(SheetContent(run.id, subject, run.path, run.notebook, run.reason))
+    entries = [replace(entry, confirmed_by=tuple(confirmed.get(entry.id, entry.confirmed_by))) for entry in entries]
     return Content(tuple(sheets), Ledger.from_json(entry.to_json() for entry in entries))

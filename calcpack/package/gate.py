@@ -46,6 +46,7 @@ def open_items(job: Job, content: Content | None, checks: JobChecks) -> list[Ope
     if content is not None:
         found += _failed(content)
         found += _foreign(content)
+        found += _unconfirmed(content)
     found += [Open("ratio", f"{result.mark}: {result.check} NG", checks.where(result)) for result in checks.failed()]
     found += [Open("not checked", text, where) for text, where in checks.owed]
     return found
@@ -65,6 +66,12 @@ def _failed(content: Content) -> Iterator[Open]:
     for entry in content.ledger:
         if entry.kind == "verdict" and entry.verdict != "OK":
             yield Open("ratio", f"{entry.means}: ratio {entry.shown} {entry.verdict}", f"sheet {entry.sheet}")
+
+
+def _unconfirmed(content: Content) -> Iterator[Open]:
+    for entry in content.ledger:
+        if entry.kind == "solved" and not entry.confirmed_by:
+            yield Open("output", f"{entry.id} = {entry.shown}, found by iteration, is not confirmed", entry.sheet)
 
 
 def _foreign(content: Content) -> Sequence[Open]:

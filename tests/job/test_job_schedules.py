@@ -17,6 +17,7 @@ from calcpack.job import (
     match,
     read_columns,
     read_forces,
+    read_stories,
     read_terminations,
 )
 from calcpack.job.schedules import COATINGS, KINDS, LOADS
@@ -206,11 +207,23 @@ def test_columns_and_their_defaults(put: Put) -> None:
         f_y=60000.0,
         f_yt=None,
         l_u=None,
-        k_x=1.0,
-        k_y=1.0,
+        k_x=None,
+        k_y=None,
         frame=None,
         lamb=1.0,
         aggregate=None,
+        psi_x_bottom=None,
+        psi_x_top=None,
+        psi_y_bottom=None,
+        psi_y_top=None,
+        beta_dns=None,
+        delta_s=None,
+        story="",
+        seismic="none",
+        legs_x=2,
+        legs_y=2,
+        ties_beyond=None,
+        group="",
         source="",
         row=2,
         file="inputs/columns.csv",
@@ -226,7 +239,69 @@ def test_every_optional_column_of_the_schedule(put: Put) -> None:
     first, second = read_columns(put("columns.csv", "\n".join([header, *rows])))
     assert (first.f_yt, first.l_u, first.k_x, first.k_y, first.frame) == (40000, 144, 1.2, 0.8, "sway")
     assert (first.lamb, first.aggregate, first.source) == (0.85, 0.75, "S-201")
-    assert (second.f_yt, second.l_u, second.k_x, second.k_y, second.frame) == (None, None, 1, 1, None)
+    assert (second.f_yt, second.l_u, second.k_x, second.k_y, second.frame) == (None, None, None, None, None)
+
+
+def test_columns_of_frames_and_special_frames(put: Put) -> None:
+    header = (
+        f"{COLUMNS},psi_x_bottom,psi_x_top,psi_y_bottom,psi_y_top,beta_dns,delta_s,story,seismic,legs_x,legs_y,"
+        "ties_beyond,group"
+    )
+    found = read_columns(put("columns.csv", f"{header}\n{C1},1,0.8,2,0,0.4,1.1,S2,special,3,4,#3@6,corner\n"))[0]
+    assert (found.psi_x_bottom, found.psi_x_top, found.psi_y_bottom, found.psi_y_top) == (1, 0.8, 2, 0)
+    assert (found.beta_dns, found.delta_s, found.story, found.seismic) == (0.4, 1.1, "S2", "special")
+    assert (found.legs_x, found.legs_y, found.group) == (3, 4, "corner")
+    assert found.ties_beyond == Transverse("ties", 3, 6.0, "#3@6")
+
+
+def test_ties_beyond_are_in_the_unit_of_cover(put: Put) -> None:
+    # published: NIST Special Publication 811 (2008), appendix B.8: 1 in = 25.4 mm.
+    row = "C1,rectangular,18,24,8-#9 (3x3),#3@101.6,38.1,4000,60000,#3@152.4"
+    (found,) = read_columns(put("columns.csv", f"{COLUMNS.replace('cover [in]', 'cover [mm]')},ties_beyond\n{row}\n"))
+    assert found.ties_beyond is not None
+    assert found.ties_beyond.spacing == pytest.approx(6.0, rel=1e-14)
+
+
+@pytest.mark.parametrize(
+    ("column", "cell", "given"),
+    [
+        ("psi_x_top", "-0.1", "psi_x_top = '-0.1'"),
+        ("beta_dns", "-1", "beta_dns = '-1'"),
+        ("delta_s", "0.99", "delta_s = '0.99'"),
+        ("seismic", "yes", "seismic = 'yes'"),
+        ("legs_x", "1", "legs_x = '1'"),
+        ("legs_y", "2.5", "legs_y = '2.5'"),
+        ("ties_beyond", "#3", "ties_beyond = '#3'"),
+    ],
+)
+def test_one_mistake_in_the_columns_of_frames(put: Put, column: str, cell: str, given: str) -> None:
+    root = put("columns.csv", f"{COLUMNS},{column}\n{C1},{cell}\n")
+    assert problems_of(read_columns, root) == [(given, f"row 2, column '{column}'")]
+
+
+STORIES = "story,combination,sum_P_u [kip],V_us [kip],Delta_o [in],l_c [ft],sum_P_c [kip]"
+
+
+def test_stories(put: Put) -> None:
+    one, two = read_stories(
+        put("stories.csv", f"{STORIES}\nS2,,1000,40,0.5,10.5,\nS2,4: 1.2D+W,900,45,0.4,10.5,9000\n")
+    )
+    assert (one.story, one.combination, one.sum_P_u, one.V_us, one.sum_P_c) == ("S2", "", 1e6, 40e3, None)
+    assert (one.Delta_o, one.l_c, one.source, one.where) == (0.5, 126, "", "inputs/stories.csv, row 2")
+    assert (two.combination, two.sum_P_c) == ("4: 1.2D+W", 9e6)
+
+
+def test_no_stories(put: Put) -> None:
+    assert read_stories(put("columns.csv", f"{COLUMNS}\n{C1}\n")) == ()
+
+
+def test_mistakes_in_stories(put: Put) -> None:
+    rows = "S2,,1000,40,0.5,10.5,\nS2,,1000,40,0.5,10.5,\n,,1000,0,0.5,10.5,\n"
+    assert problems_of(read_stories, put("stories.csv", f"{STORIES}\n{rows}")) == [
+        ("story is empty", "row 4, column 'story'"),
+        ("V_us = '0'", "row 4, column 'V_us [kip]'"),
+        ("story 'S2' twice for one combination", "row 3"),
+    ]
 
 
 def test_a_schedule_of_circular_columns_needs_no_b(put: Put) -> None:
@@ -356,6 +431,7 @@ def test_forces(put: Put) -> None:
         mark="C1",
         combination="1.2D+1.6L",
         load=None,
+        case="",
         P=400000.0,
         Mx=600000.0,
         My=-240000.0,

@@ -33,7 +33,7 @@ def ledger() -> Ledger:
             worked("C-01/m", "b * l", b="C-01/b", l="C-01/l"),
             Entry(
                 "C-01/c", "solved", "c", "a depth", 1.0, "in", "1 in", "C-01", clause="22.2", method="bisection",
-                confirmed_by=("C-01/m",),
+                solved_from=("C-01/m",),
             ),
             Entry(
                 "C-01/v", "verdict", "ratio", "fits", 2.0, "", "2.00", "C-01", demand="C-01/l", capacity="L-01/a",
