@@ -3,11 +3,13 @@
 from __future__ import annotations
 
 import re
-from collections.abc import Sequence
+from collections.abc import Iterator, Sequence
+from contextlib import contextmanager
 from dataclasses import dataclass, field
 from typing import Any
 
 from calcpack import notebook, symbols
+from calcpack.errors import Problem, SheetError
 from calcpack.ledger import Entry, Ledger
 from calcpack.typeset.line import Origin
 from calcpack.units import Dimension
@@ -24,11 +26,22 @@ class SheetBook:
     subject: str
     ledger: Ledger = field(default_factory=Ledger, repr=False, kw_only=True)
     _values: dict[str, Value] = field(default_factory=dict, repr=False, kw_only=True)
+    _held: list[dict[str, Any]] | None = field(default=None, repr=False, kw_only=True)
     _cells: dict[str, tuple[int, list[Entry]]] = field(default_factory=dict, repr=False, kw_only=True)
 
     def values(self, symbol: str) -> tuple[Value, ...]:
         """The sheet's values of a symbol, in order of appearance."""
         return tuple(value for value in self._values.values() if value.entry.symbol == symbol)
+
+    def table(self, head: Sequence[str], rows: Sequence[Sequence[str | Value]], caption: str = "") -> None:
+        """A table of texts and values; values link to where they were set."""
+        if any(len(row) != len(head) for row in rows):
+            problem = Problem(
+                f"rows of {sorted({len(row) for row in rows})} cells", f"{len(head)} cells, one for each head", ""
+            )
+            raise SheetError("table", [problem], self._place())
+        cells = [[self._part(cell) for cell in row] for row in rows]
+        self._show("table", head=[self._part(cell) for cell in head], rows=cells, caption=caption)
 
     def _free_ids(self, names: Sequence[str]) -> list[str]:
         taken = {entry.id for entry in self.ledger}
@@ -74,7 +87,20 @@ class SheetBook:
         return f"sheet {self.id}, {cell}" if cell else f"sheet {self.id}"
 
     def _show(self, kind: str, entries: Sequence[Entry] = (), reads: Sequence[Any] = (), **item: Any) -> None:
-        notebook.show({"type": kind, "entries": [entry.to_json() for entry in entries], "reads": list(reads), **item})
+        made = {"type": kind, "entries": [entry.to_json() for entry in entries], "reads": list(reads), **item}
+        if self._held is None:
+            notebook.show(made)
+        else:
+            self._held.append(made)
+
+    @contextmanager
+    def _holding(self) -> Iterator[list[dict[str, Any]]]:
+        """While this holds, items are collected and not shown."""
+        outer, self._held = self._held, []
+        try:
+            yield self._held
+        finally:
+            self._held = outer
 
     def _named(self, text: str) -> list[dict[str, str]]:
         """A text in which names of the notation table stand as symbols."""

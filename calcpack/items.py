@@ -11,9 +11,10 @@ import re
 from collections.abc import Iterator, Mapping, Sequence
 from typing import Any
 
-from calcpack.typeset.emit import LATEX, PLAIN, Target
+from calcpack.typeset.emit import LATEX, PLAIN, Target, emit
+from calcpack.typeset.general import GeneralLine
 from calcpack.typeset.line import PrintedLine
-from calcpack.typeset.rows import condition_row, equation, symbol_text
+from calcpack.typeset.rows import condition_row, equation, symbol_text, with_symbols
 
 __all__ = ["MIME", "bundle", "markdown", "plain", "stored_items"]
 
@@ -60,6 +61,8 @@ def markdown(item: Item) -> str:
             return _escape(_note_text(item))
         case "table":
             return _table_markdown(item)
+        case "tabulated":
+            return _tabulated_markdown(item)
     return _escape(plain(item))
 
 
@@ -86,12 +89,19 @@ def plain(item: Item) -> str:
         case "table":
             rows = [[_cell_text(cell) for cell in row] for row in [item["head"], *item["rows"]]]
             return "\n".join("  ".join(row) for row in rows)
+        case "tabulated":
+            return _tabulated_plain(item)
     return ""
 
 
 def lines(item: Item) -> list[PrintedLine]:
     """The printed lines of a work item."""
     return [PrintedLine.from_json(line) for line in item["lines"]]
+
+
+def general(item: Item) -> list[GeneralLine]:
+    """The equations of a worked table, in symbols."""
+    return [GeneralLine.from_json(data) for data in item["equations"]]
 
 
 def _compared(item: Item) -> str:
@@ -111,6 +121,65 @@ def _table_markdown(item: Item) -> str:
     rows = [[_escape(_cell_text(cell)) for cell in row] for row in [item["head"], *item["rows"]]]
     rule = ["---"] * len(rows[0])
     return "\n".join(f"| {' | '.join(row)} |" for row in [rows[0], rule, *rows[1:]])
+
+
+def _tabulated_markdown(item: Item) -> str:
+    head = [
+        _escape(item["label"]),
+        *(_named(column, LATEX, "${}$", _escape(column["unit"])) for column in item["columns"]),
+    ]
+    rule = ["---", *["---:"] * len(item["columns"])]
+    rows = [[_escape(text) for text in row] for row in _body(item)]
+    sums = [["**Sum**", *(_sum(cell, LATEX, "${}$ = **{}**") for cell in item["totals"])]] if item["totals"] else []
+    body = r" \\ ".join(
+        _general(line, LATEX, r" \\ ", r" &\quad \text{where } ", r" \text{, and } ") for line in general(item)
+    )
+    parts = [
+        f"*{_escape(item['title'])}* · {_escape(_clauses(item))}",
+        f"$$\\begin{{aligned}} {body} \\end{{aligned}}$$" if body else "",
+        f"**{_escape(item['caption'])}**" if item["caption"] else "",
+        "\n".join(f"| {' | '.join(row)} |" for row in [head, rule, *rows, *sums]),
+    ]
+    return "\n\n".join(filter(None, parts))
+
+
+def _tabulated_plain(item: Item) -> str:
+    head = [str(item["label"]), *(_named(column, PLAIN, "{}", column["unit"]) for column in item["columns"])]
+    sums = [["Sum", *(_sum(cell, PLAIN, "{} = {}") for cell in item["totals"])]] if item["totals"] else []
+    rows = [head, *_body(item), *sums]
+    widths = [max(map(len, column)) for column in zip(*rows, strict=True)]
+    return "\n".join(
+        [
+            f"{item['title']}  [{_clauses(item)}]",
+            *(f"  {_general(line, PLAIN, ' ', '  where ', ', and ')}" for line in general(item)),
+            *([item["caption"]] if item["caption"] else []),
+            *("  ".join([row[0].ljust(widths[0]), *map(str.rjust, row[1:], widths[1:])]).rstrip() for row in rows),
+        ]
+    )
+
+
+def _body(item: Item) -> list[list[str]]:
+    return [[str(row["label"]), *(cell["text"] if cell else "" for cell in row["cells"])] for row in item["rows"]]
+
+
+def _named(column: Item, target: Target, form: str, unit: str) -> str:
+    return f"{form.format(symbol_text(column['symbol'], target).strip())}{f', {unit}' if unit else ''}"
+
+
+def _sum(cell: Item | None, target: Target, form: str) -> str:
+    return form.format(symbol_text(cell["symbol"], target).strip(), cell["text"]) if cell else ""
+
+
+def _general(line: GeneralLine, target: Target, joint: str, where: str, also: str) -> str:
+    sign = " &" if target is LATEX else " "
+    rows = joint.join(f"{left.strip()}{sign}{right.strip()}" for left, right in line.rows(target))
+    tests = also.join(emit(with_symbols(layout), target).strip() for layout in line.conditions)
+    return f"{rows}{where}{tests}" if tests else rows
+
+
+def _clauses(item: Item) -> str:
+    cited = (f"{line['edition']} {line['clause']}".strip() for line in item["equations"])
+    return "; ".join(dict.fromkeys(cited)) or "arithmetic"
 
 
 def _rows(line: PrintedLine, target: Target) -> list[tuple[str, str]]:

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Sequence
+from collections.abc import Callable, Mapping, Sequence
 from dataclasses import dataclass
 from pathlib import Path
 from typing import TYPE_CHECKING, Any
@@ -11,12 +11,14 @@ from calcpack import notebook, symbols
 from calcpack.errors import Problem, SheetError
 from calcpack.formula import Formula
 from calcpack.solving import Solving
+from calcpack.tabulation import Row, Tabulated, Tabulation
 from calcpack.units import Measured, convert, display_unit
 from calcpack.value import Value
 
 if TYPE_CHECKING:
     from calcpack.aci318.editions import Edition
     from calcpack.job import Job
+    from calcpack.members.results import CheckResult
 
 __all__ = ["Scheduled"]
 
@@ -65,15 +67,26 @@ class Scheduled(Solving):
         SheetError : no such mark
         RangeError : everything that is wrong with the row, at once
         """
-        from calcpack.job import read_columns, read_forces
-        from calcpack.members.column import work_column
+        self._work_column(mark)
+
+    def _work_column(self, mark: str) -> tuple[Any, list[CheckResult]]:
+        from calcpack.job import read_columns, read_forces, read_stories
+        from calcpack.members.column import Context, work_column
+        from calcpack.members.column_loads import combined
 
         with notebook.reading_inputs():
-            rows, listed = read_columns(self._root), read_forces(self._root)
+            rows, listed, stories = read_columns(self._root), read_forces(self._root), read_stories(self._root)
         row = self._row("columns", mark, rows)
-        forces = [force for force in listed if force.mark == mark]
-        self._head("columns", [row], f"{row.mark}: {row.shape} column", [(f"forces {mark}", forces)])
-        work_column(SheetPad(self), row, forces, self.code)
+        own = [force for force in listed if force.mark == mark]
+        told = [one for one in stories if row.story and one.story == row.story]
+        reads: list[tuple[str, Sequence[Any]]] = [
+            (f"forces {mark}", own),
+            *([(f"stories {row.story}", told)] if row.story else []),
+        ]
+        self._head("columns", [row], f"{row.mark}: {row.shape} column", reads, settings=True)
+        job = self._job
+        forces = combined(row, own, job.codes.loads, job.combining)
+        return row, work_column(SheetPad(self), row, forces, Context(self.code, told, job.columns.stiffness))
 
     def _row(self, table: str, mark: str, rows: Sequence[Any]) -> Any:
         found = [row for row in rows if row.mark == mark]
@@ -85,12 +98,21 @@ class Scheduled(Solving):
             raise SheetError("schedule", [problem], self._place())
         return found[0]
 
-    def _head(self, table: str, rows: Sequence[Any], text: str, more: Sequence[tuple[str, Sequence[Any]]] = ()) -> None:
+    def _head(
+        self,
+        table: str,
+        rows: Sequence[Any],
+        text: str,
+        more: Sequence[tuple[str, Sequence[Any]]] = (),
+        settings: bool = False,
+    ) -> None:
         from calcpack.job import row_digest
 
         self._begin()
         listed = [(f"{table} {row.mark}", [row]) for row in rows] + list(more)
         reads = [[key, "".join(row_digest(row) for row in found)] for key, found in listed]
+        if settings:
+            reads.append(["job settings", repr((self._job.combining, self._job.columns))])
         self._show("heading", reads=reads, text=text, level=2)
 
 
@@ -112,6 +134,29 @@ class SheetPad:
         """A working of the sheet."""
         made: Value = self.sheet.work(formula, **values)
         return made
+
+    def tabulate(self, table: Tabulation, rows: Sequence[Row[Value]], shared: Mapping[str, Value]) -> Tabulated[Value]:
+        """A worked table of the sheet."""
+        made: Tabulated[Value] = self.sheet.tabulate(table, rows, shared)
+        return made
+
+    def solved(
+        self, symbol: str, value: float, means: str, method: str, clause: str, solved_from: Sequence[Value]
+    ) -> Value:
+        """A solved value of the sheet."""
+        dimension = symbols.lookup(symbol).dimension
+        unit = display_unit(dimension)
+        measured = Measured(value, dimension, unit, convert(value, unit))
+        made: Value = self.sheet._set_solved(symbol, measured, means, method, clause, solved_from)
+        return made
+
+    def confirm(self, solved: Sequence[Value], by: Sequence[Value]) -> None:
+        """What confirms solved values."""
+        self.sheet.confirm(solved, by)
+
+    def figure(self, draw: Callable[[], Any]) -> None:
+        """A figure of the sheet."""
+        self.sheet.figure(draw())
 
     def number(self, value: Value) -> float:
         """The number behind a value."""

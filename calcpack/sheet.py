@@ -13,10 +13,11 @@ from pathlib import Path
 from typing import TYPE_CHECKING, Any
 
 from calcpack import notebook, symbols
+from calcpack.column_sheets import ColumnSheets
 from calcpack.errors import InputError, Problem, SheetError
 from calcpack.formula import Clause, Formula
 from calcpack.ledger import Entry, passes
-from calcpack.scheduled import Scheduled
+from calcpack.tabulating import Tabulating
 from calcpack.typeset.line import Origin, printed_lines, with_unit
 from calcpack.typeset.store import LayoutStore
 from calcpack.units import RATIO, Measured, coherent_unit
@@ -32,7 +33,7 @@ _STATUS = ("confirmed", "assumed")
 
 
 @dataclass
-class Sheet(Scheduled):
+class Sheet(ColumnSheets, Tabulating):
     """A calculation sheet, one for each notebook.
 
     Parameters
@@ -170,16 +171,6 @@ class Sheet(Scheduled):
         if level not in (2, 3):
             raise SheetError("heading", [Problem(f"level {level}", "2, or 3 below it", "")], self._place())
         self._show("heading", text=text, level=level)
-
-    def table(self, head: Sequence[str], rows: Sequence[Sequence[str | Value]], caption: str = "") -> None:
-        """A table of texts and values; values link to where they were set."""
-        if any(len(row) != len(head) for row in rows):
-            problem = Problem(
-                f"rows of {sorted({len(row) for row in rows})} cells", f"{len(head)} cells, one for each head", ""
-            )
-            raise SheetError("table", [problem], self._place())
-        cells = [[self._part(cell) for cell in row] for row in rows]
-        self._show("table", head=[self._part(cell) for cell in head], rows=cells, caption=caption)
 
     def figure(self, figure: Figure, caption: str = "") -> None:
         """A figure, drawn to scale by `calcpack.figures`, or any object with ``svg``, ``caption`` and ``alt``."""

@@ -42,7 +42,11 @@ class Solving(SheetBook):
             found = f"{symbol}: method {method!r}, solved from {loose or len(solved_from)}"
             problem = Problem(found, "a method, and the values of the ledger that it was found from", "")
             raise SheetError("solved value", [problem], self._place())
-        measured = self._measured(symbol, value)
+        return self._set_solved(symbol, self._measured(symbol, value), means, method, clause, solved_from)
+
+    def _set_solved(
+        self, symbol: str, measured: Measured, means: str, method: str, clause: str, solved_from: Sequence[Value]
+    ) -> Value:
         self._begin()
         identifier = self._free_ids([symbol])[0]
         shown = _many_figures(measured)
@@ -84,10 +88,13 @@ class Solving(SheetBook):
         ids = [item.entry.id for item in by]
         for value in solved:
             self.ledger.confirm(value.entry.id, ids)
-        names = ", ".join(dict.fromkeys(item.entry.symbol for item in solved))
+        said: list[dict[str, str]] = []
+        for name in dict.fromkeys(item.entry.symbol for item in solved):
+            said += [self._part(", ")] if said else []
+            said.append({"text": name, "link": "", "sheet": "", "symbol": name})
         self._show(
             "note", style="reason", confirms=[[value.entry.id, ids] for value in solved],
-            parts=[part for text in (f"{names} confirmed: the differences vanish.",) for part in self._named(text)],
+            parts=[*said, self._part(" confirmed: the differences vanish.")],
         )  # fmt: skip
 
     def _measured(self, symbol: str, value: object, unit: str = "") -> Measured:

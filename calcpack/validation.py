@@ -21,6 +21,7 @@ from calcpack.formula import Formula
 from calcpack.members.anchorage import required_length
 from calcpack.members.pad import FloatPad
 from calcpack.members.termination import Termination
+from calcpack.validation_sections import section_value
 
 __all__ = ["Case", "CaseResult", "cases", "published_folder", "run", "table"]
 
@@ -177,11 +178,17 @@ def _axial(case: Case) -> float:
     return columns.design_axial_strength(phi=phi, P_n_max=maximum(P_o=P_o)) / 1000
 
 
+def _section(case: Case) -> float:
+    """A section under axial force and bending, in the unit its source prints."""
+    return section_value(case.inputs, case.quantity)
+
+
 _ADAPTERS: dict[str, Callable[[Case], float]] = {
     "anchorage": _anchorage,
     "axial": _axial,
     "bar": _bar,
     "formula": _formula,
+    "section": _section,
 }
 
 

@@ -31,6 +31,8 @@ __all__ = [
     "design_axial_strength",
     "least_dimension_circular",
     "least_dimension_rectangular",
+    "outermost_bar_x",
+    "outermost_bar_y",
     "phi_spiral",
     "phi_tied",
     "reinforcement_ratio",
@@ -213,6 +215,20 @@ def bar_circle(*, h: Length, c_cover: Length, d_bt: Length, d_b: Length) -> Leng
     """Diameter of the circle through the bar centres of a circular column."""
     D_s = h - 2 * (c_cover + d_bt) - d_b
     return D_s
+
+
+@formula(_GEOMETRY)
+def outermost_bar_x(*, b: Length, c_cover: Length, d_bt: Length, d_b: Length) -> Length:
+    """Distance of the outermost bar centres from the centroid, along x."""
+    x_o = b / 2 - (c_cover + d_bt + d_b / 2)
+    return x_o
+
+
+@formula(_GEOMETRY)
+def outermost_bar_y(*, h: Length, c_cover: Length, d_bt: Length, d_b: Length) -> Length:
+    """Distance of the outermost bar centres from the centroid, along y."""
+    y_o = h / 2 - (c_cover + d_bt + d_b / 2)
+    return y_o
 
 
 @formula(_GEOMETRY)

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from dataclasses import dataclass
 
-from calcpack.aci318 import development, factors, heads, hooks
+from calcpack.aci318 import development, factors, heads, hooks, shear, special_frames
 from calcpack.aci318.standards import ACI_318_14, ACI_318_19
 from calcpack.errors import InputError, Problem
 from calcpack.formula import Formula, Standard
@@ -27,6 +27,12 @@ class Edition:
     hook_by_cover : psi_c of hooks goes by cover and psi_r by ties at 3 d_b, else psi_c by strength and psi_r by A_th
     head_spacing : least centre-to-centre spacing of headed bars
     close_bars_need_ties : whether bars of Grade 80 and above, closer than 6 in, need K_tr of 0.5 d_b
+    shear_compression, shear_alone, shear_tension : shear strength of concrete with axial compression, without axial
+        force, and with axial tension
+    shear_few_ties : the same with less than the minimum of shear reinforcement, or None where it makes no difference
+    biaxial_shear : sum of the ratios of shear along x and y, or None where each is verified alone
+    special_yield : largest yield strength of longitudinal bars in a special moment frame
+    special_spacing, special_spacing_beyond : largest spacing of hoops of such a column, within l_o and outside it
     """
 
     standard: Standard
@@ -43,6 +49,14 @@ class Edition:
     hook_by_cover: bool
     head: Formula
     head_spacing: Formula
+    shear_compression: Formula
+    shear_alone: Formula
+    shear_tension: Formula
+    shear_few_ties: Formula | None
+    biaxial_shear: Formula | None
+    special_yield: Formula
+    special_spacing: Formula
+    special_spacing_beyond: Formula
 
     @property
     def name(self) -> str:
@@ -68,6 +82,14 @@ EDITIONS: dict[str, Edition] = {
             hook_by_cover=True,
             head=heads.head_14,
             head_spacing=heads.head_spacing_14,
+            shear_compression=shear.concrete_compression_14,
+            shear_alone=shear.concrete_alone_14,
+            shear_tension=shear.concrete_tension_14,
+            shear_few_ties=None,
+            biaxial_shear=None,
+            special_yield=special_frames.yield_maximum_14,
+            special_spacing=special_frames.confinement_spacing_14,
+            special_spacing_beyond=special_frames.spacing_beyond_14,
         ),
         Edition(
             standard=ACI_318_19,
@@ -84,6 +106,14 @@ EDITIONS: dict[str, Edition] = {
             hook_by_cover=False,
             head=heads.head_19,
             head_spacing=heads.head_spacing_19,
+            shear_compression=shear.concrete_with_ties_19,
+            shear_alone=shear.concrete_with_ties_19,
+            shear_tension=shear.concrete_with_ties_19,
+            shear_few_ties=shear.concrete_few_ties_19,
+            biaxial_shear=shear.biaxial_shear,
+            special_yield=special_frames.yield_maximum_19,
+            special_spacing=special_frames.confinement_spacing_19,
+            special_spacing_beyond=special_frames.spacing_beyond_19,
         ),
     )
 }

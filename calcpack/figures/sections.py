@@ -9,7 +9,7 @@ from calcpack.figures.bars import Bar
 from calcpack.figures.drawing import CENTRE, INK, PALE, SMALL, SOFT, Drawing, Figure, Pen, Point, arc
 from calcpack.figures.trade import Refusal, feet_inches, scale_that_fits
 
-__all__ = ["column_section_circular", "column_section_rectangular"]
+__all__ = ["bar_inside", "column_section_circular", "column_section_rectangular"]
 
 _PAPER = 2.4
 
@@ -48,7 +48,7 @@ def column_section_rectangular(
     inset = cover + tie_d
     for x, y, d_b in bars:
         inside = abs(x) + d_b / 2 <= b / 2 - inset + 1e-6 and abs(y) + d_b / 2 <= h / 2 - inset + 1e-6
-        _bar_inside(refusal, Bar(x, y, d_b), inside)
+        bar_inside(refusal, Bar(x, y, d_b), inside)
     refusal.settle()
     drawing = Drawing(scale or scale_that_fits(b, h, _PAPER, _PAPER))
     drawing.rectangle(-b / 2, -h / 2, b / 2, h / 2, name="outline")
@@ -99,7 +99,7 @@ def column_section_circular(
     refusal.unless(bool(bars), "no bars", "one bar at least", "give the bars of the schedule")
     inside = h / 2 - cover - spiral_d
     for x, y, d_b in bars:
-        _bar_inside(refusal, Bar(x, y, d_b), math.hypot(x, y) + d_b / 2 <= inside + 1e-6)
+        bar_inside(refusal, Bar(x, y, d_b), math.hypot(x, y) + d_b / 2 <= inside + 1e-6)
     refusal.settle()
     drawing = Drawing(scale or scale_that_fits(h, h, _PAPER, _PAPER))
     drawing.circle((0, 0), h, fill=PALE, name="outline")
@@ -121,7 +121,8 @@ def column_section_circular(
     return drawing.finish(f"Section of {name}, {feet_inches(h)} dia., {bar_label}", alt)
 
 
-def _bar_inside(refusal: Refusal, bar: Bar, inside: bool) -> None:
+def bar_inside(refusal: Refusal, bar: Bar, inside: bool) -> None:
+    """Note a problem where a bar has no diameter or is not `inside` the tie."""
     refusal.positive(d_b=bar.d_b)
     given = f"bar of {bar.d_b:g} in at x = {bar.x:g} in, y = {bar.y:g} in"
     refusal.unless(inside, given, "the whole bar inside the tie, clear cover kept", "check size, cover and layout")

@@ -13,7 +13,9 @@ from pathlib import Path
 
 from calcpack.errors import Problem, TableError
 from calcpack.job.givens import GivenValue, read_givens
+from calcpack.job.settings import AS_USUAL, ColumnSettings, column_settings, load_settings
 from calcpack.job.toml import Place, TomlFile
+from calcpack.loads.combinations import AS_CODE, Settings
 
 __all__ = ["ROLES", "Codes", "Deferred", "Job", "Limit", "Person", "Revision", "find", "load"]
 
@@ -88,6 +90,9 @@ class Job:
     revisions : in file order, which is date order
     statement : the paragraphs of the basis of design
     limits, deferred : what the basis of design lists
+    combining : settings of the load combinations
+    live_basis : why a companion live load is reduced, where it is
+    columns : settings of the column sheets
     """
 
     root: Path
@@ -104,6 +109,9 @@ class Job:
     statement: tuple[str, ...] = ()
     limits: tuple[Limit, ...] = ()
     deferred: tuple[Deferred, ...] = ()
+    combining: Settings = AS_CODE
+    live_basis: str = ""
+    columns: ColumnSettings = AS_USUAL
 
     @cached_property
     def givens(self) -> tuple[GivenValue, ...]:
@@ -159,8 +167,9 @@ def load(path: Path) -> Job:
         raise _no_job(path, "there is none")
     file = TomlFile(path / _FILE, _FILE)
     top = file.top
-    top.only("job", "codes", "units", "people", "revision", "basis", "limit", "deferred")
+    top.only("job", "codes", "units", "loads", "columns", "people", "revision", "basis", "limit", "deferred")
     texts = _job(top.table("job"))
+    loads = top.table("loads", required=False)
     job = Job(
         path,
         **texts,
@@ -171,6 +180,9 @@ def load(path: Path) -> Job:
         statement=_statement(top.table("basis", required=False)),
         limits=tuple(Limit(**_texts(place, "name", "value", "source")) for place in top.entries("limit")),
         deferred=tuple(Deferred(**_texts(place, "item", "assumed", "by")) for place in top.entries("deferred")),
+        combining=load_settings(loads),
+        live_basis=loads.text("live_companion_basis", required=False),
+        columns=column_settings(top.table("columns", required=False)),
     )
     file.finish()
     return job

@@ -28,6 +28,7 @@ __all__ = [
     "StoryRow",
     "Termination",
     "match",
+    "match_stories",
     "read_columns",
     "read_forces",
     "read_givens",
@@ -300,6 +301,28 @@ def match(columns: Sequence[ColumnRow], forces: Sequence[ForceRow]) -> None:
     problems = [*_unmatched(forces, columns, "columns"), *_unmatched(columns, forces, "forces")]
     if problems:
         raise failure("inputs: marks of columns and forces", problems)
+
+
+def match_stories(columns: Sequence[ColumnRow], stories: Sequence[StoryRow]) -> None:
+    """Hold the stories that columns name against those of the table.
+
+    Raises
+    ------
+    TableError : a story that the table does not hold
+    """
+    known = list(dict.fromkeys(row.story for row in stories))
+    problems = [
+        Problem(
+            f"story = {shown(row.story)}",
+            f"a story of inputs/stories ({', '.join(known) or 'which lists none'})",
+            did_you_mean(row.story, known) or "add it there or clear it here",
+            row.where,
+        )
+        for row in columns
+        if row.story and row.story not in known
+    ]
+    if problems:
+        raise failure("inputs: stories of columns", problems)
 
 
 def _unmatched(

@@ -1,143 +1,133 @@
-"""Axial strength, longitudinal bars and transverse reinforcement of one column.
+"""The checks of one column: axial force with bending, slenderness, shear, its bars, its ties or spiral.
 
-Each check is a procedure on a pad: the same steps serve the checks in bulk and the printed sheet. Bending,
-slenderness and shear are not covered here; `owed` names them.
+Each check is a procedure on a pad: the same steps serve the checks in bulk and the printed sheet. In bulk every
+combination is looked through; a sheet works the governing one of each check.
 """
 
 from __future__ import annotations
 
 from collections.abc import Iterable, Sequence
-from typing import TypeVar
+from dataclasses import dataclass
+from functools import cached_property
+from typing import Generic, TypeVar
 
-from calcpack.aci318 import columns
+from calcpack.aci318 import stiffness
 from calcpack.aci318.editions import Edition
+from calcpack.members.column_axial import axial_check
+from calcpack.members.column_bars import bar_checks
+from calcpack.members.column_forces import ForceValues
+from calcpack.members.column_interaction import bending_check
+from calcpack.members.column_like import ColumnLike, ForceLike, StoryLike
 from calcpack.members.column_problems import refuse_problems
-from calcpack.members.column_rules import NO_AGGREGATE, ColumnWorking
-from calcpack.members.column_section import ColumnLike, ForceLike, force_source
+from calcpack.members.column_rules import ColumnWorking
+from calcpack.members.column_shear import shear_checks
+from calcpack.members.column_slender_bending import wanted
+from calcpack.members.column_slender_frame import story_of
+from calcpack.members.column_slenderness import Slenderness, slenderness_checks
+from calcpack.members.column_special import special_checks, special_owed
 from calcpack.members.column_ties import transverse_checks
+from calcpack.members.interaction import Interaction, LoadPoint
 from calcpack.members.pad import FloatPad, Pad
 from calcpack.members.results import CheckResult
-from calcpack.members.working import Choice
 
-__all__ = ["axial_capacity", "check", "owed", "work_column"]
+__all__ = ["Context", "check", "owed", "work_column"]
 
 T = TypeVar("T")
 _FLOATS = FloatPad()
-_AXIAL = "22.4.2"
-_UNFACTORED = "Forces are listed by load, not factored: the axial force is not verified."
+_STIFFNESS = {"a": stiffness.stiffness_gross, "b": stiffness.stiffness_bars}
 
 
-def check(column: ColumnLike, forces: Iterable[ForceLike], edition: Edition) -> list[CheckResult]:
-    """Check one column: axial strength under its forces, its bars, its ties or spiral.
+@dataclass(frozen=True)
+class Context:
+    """What the checks of a column need beside its row and its forces.
+
+    Attributes
+    ----------
+    edition : of ACI 318
+    stories : of sway frames
+    stiffness : (EI)_eff by 6.6.4.4.4 (a) or (b)
+    """
+
+    edition: Edition
+    stories: Sequence[StoryLike] = ()
+    stiffness: str = "a"
+
+
+def check(column: ColumnLike, forces: Iterable[ForceLike], context: Context) -> list[CheckResult]:
+    """Check one column under every combination.
 
     Raises
     ------
     RangeError : everything that is wrong with the column, at once
     """
-    return work_column(_FLOATS, column, forces, edition)
+    return _Checks(_FLOATS, column, forces, context).results(evidence=False)
 
 
-def work_column(pad: Pad[T], column: ColumnLike, forces: Iterable[ForceLike], edition: Edition) -> list[CheckResult]:
-    """Work and verify every check of one column on a pad.
+def work_column(pad: Pad[T], column: ColumnLike, forces: Iterable[ForceLike], context: Context) -> list[CheckResult]:
+    """Work and verify every check of one column on a pad, each in its governing combination.
 
     Raises
     ------
     RangeError : everything that is wrong with the column, at once
     """
-    refuse_problems(column, edition)
-    work = ColumnWorking(pad, column, edition)
-    work.state("A_g", "A_st", "phi_P_n_max", "c_cover", "d_b", "d_bt", "s")
-    if column.aggregate is not None:
-        work.state("d_agg")
-    if column.ties.kind == "spiral":
-        work.state("rho_s", "rho_s_min")
-    pad.heading("Axial strength")
-    results = [_axial(work, list(forces))]
-    pad.heading("Longitudinal bars")
-    results += [_reinforcement_ratio(work), _number_of_bars(work), _bar_spacing(work)]
-    pad.heading("Spiral" if column.ties.kind == "spiral" else "Ties")
-    return [*results, *transverse_checks(work)]
+    return _Checks(pad, column, forces, context).results(evidence=True)
 
 
-def axial_capacity(pad: Pad[T], column: ColumnLike, edition: Edition) -> tuple[T, T]:
-    """Work the axial strength at zero eccentricity and the maximum design axial strength."""
-    return _capacity(ColumnWorking(pad, column, edition))
+class _Checks(Generic[T]):
+    """The checks of one column on one pad."""
 
+    def __init__(self, pad: Pad[T], column: ColumnLike, forces: Iterable[ForceLike], context: Context) -> None:
+        refuse_problems(column, context.edition)
+        self.column, self.context = column, context
+        self.forces = list(forces)
+        self.factored = [force for force in self.forces if force.combination is not None]
+        self.work = ColumnWorking(pad, column, context.edition)
+        self.values = ForceValues(self.work)
+        rule = _STIFFNESS[context.stiffness]
+        self.slender = Slenderness(self.work, rule, lambda force: self.values(force, wanted(column, force)))
 
-def _capacity(work: ColumnWorking[T]) -> tuple[T, T]:
-    _, _, P_o, _, capacity = [work.value(symbol) for symbol in ("A_g", "A_st", "P_o", "P_n_max", "phi_P_n_max")]
-    return P_o, capacity
+    def results(self, evidence: bool) -> list[CheckResult]:
+        """Every check, in the order of a sheet, that of axial force with bending first."""
+        work, column = self.work, self.column
+        self._givens()
+        slender = slenderness_checks(work, self.forces, self.context.stories, self.slender)
+        bending = bending_check(work, self.interaction, self.slender, self.factored, self.context.stories, evidence)
+        work.pad.heading("Axial strength")
+        axial = axial_check(work, self.forces, self.values)
+        work.pad.heading("Longitudinal bars")
+        bars = list(bar_checks(work))
+        work.pad.heading("Spiral" if column.ties.kind == "spiral" else "Ties")
+        transverse = list(transverse_checks(work))
+        shear = shear_checks(work, self.factored, self.values)
+        special = special_checks(work, self.factored, self.values)
+        return [bending, *slender, axial, *bars, *transverse, *shear, *special]
 
+    def _givens(self) -> None:
+        """A sheet opens with what the schedule and the standards state."""
+        self.work.state("A_g", "A_st", "phi_P_n_max", "c_cover", "d_b", "d_bt", "s", "beta_1", "eps_ty")
+        if self.column.aggregate is not None:
+            self.work.state("d_agg")
+        if self.column.ties.kind == "spiral":
+            self.work.state("rho_s", "rho_s_min")
 
-def _axial(work: ColumnWorking[T], forces: Sequence[ForceLike]) -> CheckResult:
-    P_o, capacity = _capacity(work)
-    values = {"P_o": P_o, "phi_P_n_max": capacity}
-    governing = max(forces, key=lambda force: force.P, default=None)
-    if governing is None:
-        work.pad.reason("No forces listed for this column: its axial strength is stated, not verified.")
-        return work.result("axial strength", _AXIAL, None, values)
-    if governing.combination is None:
-        return work.result("axial strength", _AXIAL, None, values, work.note(_UNFACTORED))
-    name = governing.combination
-    work.pad.reason(_why(name, len(forces)))
-    means = f"factored axial force, {name}, compression positive"
-    values["P_u"] = P_u = work.pad.given("P_u", governing.P, means, force_source(governing, work.column))
-    if governing.P <= 0:
-        # Tension is not a matter of this check: its ratio is zero, and `owed` names the check it needs.
-        work.pad.reason("No combination compresses the column: its maximum axial strength is not called on.")
-        return work.result("axial strength", _AXIAL, 0.0, values, combination=name)
-    ratio = work.verify("axial force within the maximum axial strength", P_u, capacity, _AXIAL)
-    return work.result("axial strength", _AXIAL, ratio, values, combination=name)
+    @cached_property
+    def interaction(self) -> Interaction:
+        """Every load point of every combination against the design surface; second-order effects included."""
+        bulk = Slenderness(
+            ColumnWorking(_FLOATS, self.column, self.context.edition), _STIFFNESS[self.context.stiffness]
+        )
+        points = [
+            LoadPoint(number, place, force.combination or "", point.P, point.Mx, point.My)
+            for number, force in enumerate(self.factored)
+            for place, point in enumerate(bulk.magnified(force, self._story(force)).points)
+        ]
+        return Interaction(self.column, self.context.edition, points)
 
-
-def _why(name: str, count: int) -> str:
-    listed = "the only combination listed" if count == 1 else f"the largest axial force of {count} combinations"
-    return f"Governing: {name}, {listed}."
-
-
-def _reinforcement_ratio(work: ColumnWorking[T]) -> CheckResult:
-    rho_g, clause = work.value("rho_g"), work.clause(columns.reinforcement_ratio)
-    low = work.verify("least ratio of longitudinal reinforcement", work.value("rho_g_min"), rho_g, clause)
-    high = work.verify("largest ratio of longitudinal reinforcement", rho_g, work.value("rho_g_max"), clause)
-    values = {"rho_g": rho_g, "A_st": work.value("A_st"), "A_g": work.value("A_g")}
-    return work.result("reinforcement ratio", clause, max(low, high), values)
-
-
-def _number_of_bars(work: ColumnWorking[T]) -> CheckResult:
-    n_bars, n_min, clause = work.value("n_bars"), work.value("n_min"), work.clause(columns.bars_minimum_tied)
-    ratio = work.verify("number of longitudinal bars", n_min, n_bars, clause)
-    return work.result("number of bars", clause, ratio, {"n_bars": n_bars, "n_min": n_min})
-
-
-def _bar_spacing(work: ColumnWorking[T]) -> CheckResult:
-    closest = min(work.faces, key=lambda face: work.pad.number(face.s_clear))
-    known = work.column.aggregate is not None
-    notes = () if known else work.note(NO_AGGREGATE)
-    rule = columns.bar_spacing_minimum_aggregate if known else columns.bar_spacing_minimum
-    least, clause = work.work(Choice(rule)), work.clause(rule)
-    values = {"s_clear": closest.s_clear, "s_clear_min": least}
-    if work.pad.number(closest.s_clear) > 0:
-        ratio = work.verify("clear spacing of longitudinal bars", least, closest.s_clear, clause)
-        return work.result("bar spacing", clause, ratio, values, notes)
-    # No clear spacing is left to compare with. The least one is at least 1.5 d_b, more than d_b between centres.
-    reason = f"Bars {closest.name} overlap or touch: the least clear spacing exceeds even the spacing of their centres."
-    pitch = work.work(Choice(closest.pitch, reason), **closest.own)
-    work.verify("clear spacing of longitudinal bars, which overlap", least, pitch, clause)
-    return work.result("bar spacing", clause, None, values, notes, met=False)
+    def _story(self, force: ForceLike) -> StoryLike | None:
+        return story_of(self.column, force, self.context.stories)
 
 
 def owed(column: ColumnLike, forces: Iterable[ForceLike]) -> list[str]:
     """The checks that the column owes and that are not covered here, for the list of open items."""
-    listed = list(forces)
-    names = []
-    if any(force.Mx is None or force.My is None or force.Mx or force.My or force.P < 0 for force in listed):
-        names.append("axial force with bending is checked here, its working is not printed on a sheet yet")
-    if any(force.combination is None for force in listed):
-        names.append("load combinations: unfactored rows are not combined yet, and no check counts them")
-    if column.l_u is not None:
-        names.append("slenderness")
-    if any(force.Vx or force.Vy for force in listed):
-        names.append("shear")
-    if any(force.T for force in listed):
-        names.append("torsion")
-    return names
+    names = ["torsion"] if any(force.T for force in forces) else []
+    return [*names, *(special_owed() if column.seismic == "special" else [])]

@@ -10,6 +10,7 @@ from calcpack.aci318.limits import CONCRETE, YIELD_LEAST
 from calcpack.errors import Problem, RangeError
 from calcpack.formula import Limit
 from calcpack.members.column_section import ColumnLike, row_of
+from calcpack.members.column_slenderness import slender_problems
 
 __all__ = ["refuse_problems"]
 
@@ -21,7 +22,7 @@ def refuse_problems(column: ColumnLike, edition: Edition) -> None:
     ------
     RangeError : a value outside the range of its clause or impossible in the section
     """
-    problems = [*_sizes(column), *_materials(column, edition), *_bars(column)]
+    problems = [*_sizes(column), *_materials(column, edition), *_bars(column), *slender_problems(column, edition)]
     if not problems:
         problems = list(_fit(column))
     if problems:

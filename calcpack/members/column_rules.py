@@ -5,17 +5,20 @@ from __future__ import annotations
 from collections.abc import Callable, Iterator, Mapping
 from dataclasses import dataclass
 from functools import cached_property
+from math import isclose
 from typing import Generic, TypeVar
 
-from calcpack.aci318 import columns, ties
+from calcpack.aci318 import columns, compatibility, stress_block, ties
 from calcpack.aci318.bars import bar
 from calcpack.aci318.editions import Edition
+from calcpack.aci318.standards import ACI_318_14
 from calcpack.formula import Formula
 from calcpack.members.column_section import ColumnLike, section_source
 from calcpack.members.pad import Pad
 from calcpack.members.results import CheckResult, measured, verdict_of
 from calcpack.members.sources import NOMINAL
 from calcpack.members.working import Choice, Stated, Working
+from calcpack.symbols import lookup
 
 __all__ = ["CENTRE_LINE", "NO_AGGREGATE", "NO_F_YT", "ColumnWorking", "Face"]
 
@@ -53,6 +56,12 @@ def _axial(column: ColumnLike, _edition: Edition) -> Choice:
     return Choice(columns.axial_strength_high_grade if column.f_y > 80_000 else columns.axial_strength)
 
 
+def _yield_strain(column: ColumnLike, edition: Edition) -> Choice:
+    # A stress that was converted from another unit may miss the grade by its last digits.
+    permitted = edition.standard == ACI_318_14 and isclose(column.f_y, 60_000.0, rel_tol=1e-9)
+    return Choice(compatibility.yield_strain_grade_60 if permitted else compatibility.yield_strain)
+
+
 def _counted_yield(_column: ColumnLike, edition: Edition) -> Choice:
     return Choice(columns.yield_in_axial_strength, f"Bars above Grade 80 ({edition.name} 22.4.2.1).")
 
@@ -70,6 +79,10 @@ _RULES: Mapping[str, Rule] = {
     "rho_g_max": _always(columns.reinforcement_ratio_maximum),
     "n_min": _by_confinement(columns.bars_minimum_spiral, columns.bars_minimum_tied),
     "D_s": _always(columns.bar_circle),
+    "x_o": _always(columns.outermost_bar_x),
+    "y_o": _always(columns.outermost_bar_y),
+    "beta_1": _always(stress_block.beta_1),
+    "eps_ty": _yield_strain,
     "h_min": _by_shape(columns.least_dimension_circular, columns.least_dimension_rectangular),
     "d_bt_min": _by_confinement(ties.spiral_size, ties.tie_size),
     "s_max": _always(ties.tie_spacing),
@@ -125,6 +138,10 @@ class _ColumnRules:
             case "s":
                 means = "pitch of spiral" if spiral else "centre-to-centre spacing of ties"
                 return Stated(column.ties.spacing, means, self.source)
+            case "E_s":
+                return Stated(29e6, "modulus of elasticity of reinforcement", f"{self.edition.name} 20.2.2.2")
+            case "eps_cu":
+                return Stated(0.003, lookup(symbol).meaning, f"{self.edition.name} 22.2.2.1")
             case "f_yt":
                 return self.yield_of_spiral()
         return self.nominal(symbol)

@@ -2,9 +2,11 @@
 
 from __future__ import annotations
 
+from collections.abc import Callable, Mapping, Sequence
 from typing import Protocol, TypeVar
 
 from calcpack.formula import Formula
+from calcpack.tabulation import FloatBench, Row, Tabulated, Tabulation, tabulate
 
 __all__ = ["FloatPad", "Pad"]
 
@@ -23,6 +25,22 @@ class Pad(Protocol[T]):
 
     def work(self, formula: Formula, **values: T) -> T:
         """Work one equation."""
+        ...
+
+    def tabulate(self, table: Tabulation, rows: Sequence[Row[T]], shared: Mapping[str, T]) -> Tabulated[T]:
+        """Work the same equations for many rows."""
+        ...
+
+    def solved(self, symbol: str, value: float, means: str, method: str, clause: str, solved_from: Sequence[T]) -> T:
+        """State a value found by iteration from others; `confirm` then names what confirms it."""
+        ...
+
+    def confirm(self, solved: Sequence[T], by: Sequence[T]) -> None:
+        """Name the differences, as ratios, that vanish where solved values are right."""
+        ...
+
+    def figure(self, draw: Callable[[], object]) -> None:
+        """Show a figure; it is drawn only where it is printed."""
         ...
 
     def number(self, value: T) -> float:
@@ -56,6 +74,23 @@ class FloatPad:
     def work(self, formula: Formula, **values: float) -> float:
         """The result of the formula."""
         return formula(**values)
+
+    def tabulate(self, table: Tabulation, rows: Sequence[Row[float]], shared: Mapping[str, float]) -> Tabulated[float]:
+        """The values of the rows, and the totals."""
+        return tabulate(table, rows, shared, FloatBench())
+
+    def solved(
+        self, symbol: str, value: float, means: str, method: str, clause: str, solved_from: Sequence[float]
+    ) -> float:
+        """The value itself."""
+        del symbol, means, method, clause, solved_from
+        return value
+
+    def confirm(self, solved: Sequence[float], by: Sequence[float]) -> None:
+        """Dropped."""
+
+    def figure(self, draw: Callable[[], object]) -> None:
+        """Not drawn."""
 
     def number(self, value: float) -> float:
         """The value itself."""

@@ -1,8 +1,8 @@
 """An executed notebook as the blocks a template loops over: every text ready to print, nothing left to compute.
 
 A block is a plain dict with a ``kind``: ``sheet``, ``heading``, ``text``, ``given``, ``work``, ``verdict``, ``note``,
-``table`` or ``figure``. A `Markup` in it is source of the target (an equation, Markdown); a str is text to be escaped.
-Consecutive givens make one block. Links lead only to what the document holds.
+``table``, ``tabulated`` or ``figure``. A `Markup` in it is source of the target (an equation, Markdown); a str is text
+to be escaped. Consecutive givens make one block. Links lead only to what the document holds.
 """
 
 from __future__ import annotations
@@ -19,6 +19,7 @@ from calcpack.items import MIME
 from calcpack.package import text
 from calcpack.package.drawings import safe_svg
 from calcpack.typeset import emit
+from calcpack.typeset.general import GeneralLine
 from calcpack.typeset.layout import Layout
 from calcpack.typeset.line import PrintedLine
 from calcpack.typeset.names import name_tree
@@ -40,7 +41,7 @@ __all__ = ["Printer", "anchors", "blocks", "foreign_outputs"]
 Block = dict[str, Any]
 
 _TARGETS = {"html": emit.MATHML, "typst": emit.TYPST}
-_KINDS = ("sheet", "heading", "given", "work", "verdict", "note", "table", "figure")
+_KINDS = ("sheet", "heading", "given", "work", "verdict", "note", "table", "tabulated", "figure")
 _SHORT = 90  # letters of a condition, in words, that stand beside an equation
 _NUMERIC = re.compile(r"[-+−±≤≥<>=\s]*[\d.,]*\d(?:\s?×\s?10\S*)?(?:\s?%|\s[^\W\d]\S{0,11})?|[-–—]?")
 
@@ -74,6 +75,9 @@ def _identifiers(item: Mapping[str, Any]) -> Iterator[str]:
         yield item["id"]
     if item["type"] == "work":
         yield from (line["id"] for line in item["lines"])
+    if item["type"] == "tabulated":
+        cells = [*(cell for row in item["rows"] for cell in row["cells"]), *item["totals"]]
+        yield from (cell["id"] for cell in cells if cell and cell["id"])
 
 
 def foreign_outputs(nb: Any) -> list[tuple[int, str]]:
@@ -208,7 +212,7 @@ class _Maker:
             return
         makers = {
             "sheet": self._sheet, "given": self._given, "work": self._work, "verdict": self._verdict,
-            "note": self._note, "table": self._table, "figure": self._figure,
+            "note": self._note, "table": self._table, "tabulated": self._tabulated, "figure": self._figure,
         }  # fmt: skip
         made = makers[item["type"]](item)
         if made is not None:
@@ -261,6 +265,8 @@ class _Maker:
                 for (left, right), said in zip(written, words, strict=True)
             ],
             "wide": _too_wide(line),
+            "opening": "since",
+            "joint": "; since ",
             "conditions": [self._condition(layout, fills) for layout, fills in line.conditions],
             "symbol": printer.symbol(line.symbol),
             "line_result": printer.text(line.line_result) if differs else "",
@@ -268,19 +274,24 @@ class _Maker:
             "spoken": " ".join(spoken(line.symbol, line.layout, values, line.shown).split()),
         }
 
-    def _condition(self, layout: Layout, fills: Sequence[Printed]) -> Block:
+    def _condition(self, layout: Layout, fills: Sequence[Printed] | None = None) -> Block:
         # Parts of a condition stand as equations of their own, so that a long one wraps between them.
         word = layout.tree[0] if layout.tree[0] in ("and", "or") else ""
         trees = layout.tree[1] if word else (layout.tree,)
-        values = self.printer.linked(fills)
+        values = self.printer.linked(fills) if fills is not None else None
         parts = [self._test(Layout(tree, layout.slots), values) for tree in trees]
         said = any(part["spoken"] != part["spoken_values"] for part in parts)
-        words = sum(len(part["spoken"]) + len(part["spoken_values"]) for part in parts)
+        words = sum(len(part["spoken"]) + (len(part["spoken_values"]) if values is not None else 0) for part in parts)
         return {"word": word, "parts": parts, "with_values": said, "short": words <= _SHORT}
 
-    def _test(self, layout: Layout, values: Sequence[Printed]) -> Block:
-        symbols, filled = condition_row(layout, values, self.printer.emitter)
-        spoken_symbols, spoken_values = condition_row(layout, values, emit.SPOKEN)
+    def _test(self, layout: Layout, values: Sequence[Printed] | None) -> Block:
+        """A condition; without values its symbols stand alone."""
+        if values is None:
+            symbols = filled = emit.emit(with_symbols(layout), self.printer.emitter)
+            spoken_symbols = spoken_values = emit.emit(with_symbols(layout), emit.SPOKEN)
+        else:
+            symbols, filled = condition_row(layout, values, self.printer.emitter)
+            spoken_symbols, spoken_values = condition_row(layout, values, emit.SPOKEN)
         return {
             "symbols": Markup(symbols), "values": Markup(filled),
             "spoken": " ".join(spoken_symbols.split()), "spoken_values": " ".join(spoken_values.split()),
@@ -309,6 +320,54 @@ class _Maker:
             "kind": "table", "caption": self.printer.text(item["caption"]), "numeric": numeric,
             "head": [self.printer.part(cell) for cell in item["head"]],
             "rows": [[self.printer.part(cell) for cell in row] for row in item["rows"]],
+        }  # fmt: skip
+
+    def _tabulated(self, item: Mapping[str, Any]) -> Block:
+        lines, before = [], ("", "")
+        for data in item["equations"]:
+            edition = data["edition"] if data["edition"] != self._concrete else ""
+            cited = self.printer.text(edition), self.printer.text(data["clause"])
+            # A clause stands once beside the lines that follow from it.
+            stated = dict(zip(("edition", "clause"), ("", "") if cited == before else cited, strict=True))
+            lines.append({**self._general(GeneralLine.from_json(data)), **stated})
+            before = cited
+        return {
+            "kind": "tabulated", "title": self.printer.text(item["title"]), "lines": lines,
+            "caption": self.printer.text(item["caption"]), "label": self.printer.text(item["label"]),
+            "columns": [
+                {"symbol": self.printer.symbol(column["symbol"]), "unit": self.printer.text(column["unit"])}
+                for column in item["columns"]
+            ],
+            "rows": [
+                {"label": self.printer.text(row["label"]), "cells": [self._cell(cell) for cell in row["cells"]]}
+                for row in item["rows"]
+            ],
+            "totals": [
+                {**self._cell(cell), "symbol": self.printer.symbol(cell["symbol"]), "room": cell["room"]}
+                if cell
+                else {**self._cell(cell), "symbol": None, "room": ""}
+                for cell in item["totals"]
+            ],
+        }  # fmt: skip
+
+    def _cell(self, cell: Mapping[str, Any] | None) -> Block:
+        return {"anchor": self.anchor(cell["id"] if cell else ""), **self.printer.part(cell or {"text": ""})}
+
+    def _general(self, line: GeneralLine) -> Block:
+        """A line in symbols, in the form of a worked one without a result."""
+        printer = self.printer
+        written, words = line.rows(printer.emitter), line.rows(emit.SPOKEN)
+        return {
+            "anchor": "", "wide": line.wide, "opening": "where", "joint": ", and ",
+            "line_result": "", "shown": "", "spoken": "", "symbol": printer.symbol(line.symbol),
+            "rows": [
+                {
+                    "left": Markup(left), "right": Markup(right), "goes_on": index > 0,
+                    "spoken": " ".join(f"{said[0]} {said[1]}".split()),
+                }
+                for index, ((left, right), said) in enumerate(zip(written, words, strict=True))
+            ],
+            "conditions": [self._condition(layout) for layout in line.conditions],
         }  # fmt: skip
 
     def _figure(self, item: Mapping[str, Any]) -> Block:

@@ -9,9 +9,9 @@ from typing import Any, TypeVar
 
 from calcpack.aci318.editions import edition
 from calcpack.errors import InputError, TableError
-from calcpack.job import Job, match, read_columns, read_forces, read_terminations
+from calcpack.job import Job, match, match_stories, read_columns, read_forces, read_stories, read_terminations
 from calcpack.members import anchorage, column
-from calcpack.members.interaction import axial_and_bending
+from calcpack.members.column_loads import combined
 from calcpack.members.results import CheckResult
 from calcpack.members.termination import KINDS
 
@@ -50,25 +50,26 @@ def check_members(job: Job) -> JobChecks:
     """
     code = edition(job.codes.concrete)
     errors: list[InputError] = []
-    columns, forces, terminations = (_rows(errors, reader, job.root) for reader in _READERS)
+    columns, forces, terminations, stories = (_rows(errors, reader, job.root) for reader in _READERS)
     _try(errors, lambda: job.givens)
     results: list[CheckResult] = []
     owed: list[tuple[str, str]] = []
     by_mark: dict[str, list[Any]] = {}
     for force in forces:
         by_mark.setdefault(force.mark, []).append(force)
+    context = column.Context(code, stories, job.columns.stiffness)
     for row in columns:
         own = by_mark.get(row.mark, [])
-        checked = _try(errors, column.check, row, own, code)
-        if checked is not None:
-            bent = _try(errors, axial_and_bending, row, own, code)
-            results += [*([bent] if bent else []), *checked]
-        owed += [(f"{row.mark}: {name}", row.file) for name in column.owed(row, own)]
+        factored = _try(errors, combined, row, own, job.codes.loads, job.combining)
+        if factored is not None:
+            results += _try(errors, column.check, row, factored, context) or []
+            owed += [(f"{row.mark}: {name}", row.file) for name in column.owed(row, own)]
     for termination in terminations:
         found = _try(errors, anchorage.check, termination, code)
         results += [found] if found else []
     if not errors:
         _try(errors, match, columns, forces)
+        _try(errors, match_stories, columns, stories)
     if errors:
         words = "the inputs cannot be read" if any(isinstance(error, TableError) for error in errors) else _NO_CHECK
         raise errors[0] if len(errors) == 1 else type(errors[0]).gathered(words, errors)
@@ -76,7 +77,12 @@ def check_members(job: Job) -> JobChecks:
     return JobChecks(tuple(results), tuple(owed), *files)
 
 
-_READERS: tuple[Callable[[Path], tuple[Any, ...]], ...] = (read_columns, read_forces, read_terminations)
+_READERS: tuple[Callable[[Path], tuple[Any, ...]], ...] = (
+    read_columns,
+    read_forces,
+    read_terminations,
+    read_stories,
+)
 _NO_CHECK = "the schedules cannot be checked"
 _T = TypeVar("_T")
 

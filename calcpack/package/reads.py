@@ -10,7 +10,7 @@ from pathlib import Path
 from typing import Any
 
 from calcpack.job import Job, row_digest
-from calcpack.job.schedules import read_columns, read_forces, read_terminations
+from calcpack.job.schedules import read_columns, read_forces, read_stories, read_terminations
 
 __all__ = ["Inputs", "file_digest"]
 
@@ -19,6 +19,7 @@ _READERS: dict[str, Callable[[Path], tuple[Any, ...]]] = {
     "anchorage": read_terminations,
     "columns": read_columns,
     "forces": read_forces,
+    "stories": read_stories,
 }
 
 
@@ -29,13 +30,14 @@ class Inputs:
     job: Job
 
     def digest(self, key: str) -> str:
-        """The digest of what `key` names: ``job codes``, ``givens q``, ``anchorage T1``, ``forces C1``."""
+        """The digest of what `key` names: ``job codes``, ``job settings``, ``givens q``, ``anchorage T1``, ``forces C1``."""
         kind, _, name = key.partition(" ")
         if kind == "job":
-            return repr(self.job.codes)
+            return repr({"codes": self.job.codes, "settings": (self.job.combining, self.job.columns)}[name])
         if kind == "givens":
             return "".join(row_digest(row) for row in self.job.givens if row.symbol == name)
-        return "".join(row_digest(row) for row in self.tables(kind) if row.mark == name)
+        named = "story" if kind == "stories" else "mark"
+        return "".join(row_digest(row) for row in self.tables(kind) if getattr(row, named) == name)
 
     def tables(self, kind: str) -> tuple[Any, ...]:
         """The rows of a table, by its kind."""

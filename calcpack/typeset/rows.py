@@ -90,7 +90,7 @@ def equation(symbol: str, layout: Layout, printed: Sequence[Printed], target: Ta
     if all(slot.kind != "symbol" for slot in layout.slots):
         return _written(left, [("=", with_symbols(layout), False)], target)
     symbols = with_symbols(layout)
-    if width(left) + width(symbols) + width(values) + 3 <= COLUMN and not (_tall(symbols) and _tall(values)):
+    if width(left) + width(symbols) + width(values) + 3 <= COLUMN:
         return [(emit(left, target), f"{_head('=', symbols, target)}{_head('=', values, target, True)}")]
     limit = COLUMN - width(left) - 1
     rows = [("=" if not index else "", part, False) for index, part in enumerate(broken(symbols, limit))]
@@ -179,11 +179,3 @@ def width(node: Node) -> float:
             parts = children(node)
             return sum(width(part) for part in parts) + (len(parts) - 1) * (1.2 if node[0] != "mul" else 0.7)
     return 0.9 + sum(width(part) for part in children(node))
-
-
-def _tall(node: Node) -> bool:
-    return (
-        node[0] == "frac" or any(_tall(part) for part in children(node))
-        if node[0] not in ("sym", "value", "num")
-        else False
-    )

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Callable
 from typing import Any
 
@@ -9,6 +10,7 @@ from calcpack import figures as fig
 from calcpack.figures import Figure
 
 FT = 12.0
+KIP, KIP_FT = 1e3, 12e3
 
 
 def rectangular(*, n_x: int = 3, n_y: int = 4, d_b: float = 1.128, **given: Any) -> Figure:
@@ -84,6 +86,60 @@ def building(**given: Any) -> Figure:
     return fig.building_section(**(base | given))
 
 
+def neutral_axis(*, n_x: int = 3, n_y: int = 4, d_b: float = 1.128, degrees: float = 52.0, **given: Any) -> Figure:
+    """The section of `rectangular`; beta_1 of 0.8 unless `a` is given."""
+    size = {"b": 18.0, "h": 24.0, "cover": 1.5, "tie_d": 0.375} | {
+        name: given.pop(name) for name in ("b", "h", "cover", "tie_d") if name in given
+    }
+    bars = fig.rectangular_bars(**size, d_b=d_b, n_x=n_x, n_y=n_y)
+    return fig.neutral_axis_section(**size, **_cut({"bars": bars, "mark": "C3", "c": 13.3} | given, degrees))
+
+
+def neutral_axis_round(*, count: int = 10, h: float = 20.0, degrees: float = 70.0, **given: Any) -> Figure:
+    size: dict[str, Any] = {"h": h, "cover": 1.5, "tie_d": 0.5}
+    bars = fig.circular_bars(**size, d_b=1.0, count=count)
+    return fig.neutral_axis_section(b=None, **size, **_cut({"bars": bars, "mark": "C5", "c": 9.3} | given, degrees))
+
+
+def _cut(given: dict[str, Any], degrees: float) -> dict[str, Any]:
+    return {"theta": math.radians(degrees), "a": 0.8 * given["c"]} | given
+
+
+# A curve of few straight pieces, so that what is drawn can be worked by hand. Invented; kip and kip-ft.
+DESIGN = [(0, -300), (200, 0), (300, 200), (300, 500), (180, 900), (0, 900)]
+NOMINAL = [(0, -333), (222, 0), (350, 300), (400, 700), (0, 1800)]
+CONTOUR = [(200, 0), (120, 180), (0, 300), (-120, 180), (-200, 0), (-120, -180), (0, -300), (120, -180)]
+
+
+def interaction(
+    *, loads: Any = ((150, 200), (40, 700), (90, 120)), governing: Any = (150, 200, 0.5), **given: Any
+) -> Figure:
+    """Loads and the governing load (with its ratio) in kip and kip-ft: the curve is at (300, 400) along it."""
+    curves = {
+        "P": [p * KIP for _, p in DESIGN],
+        "M": [m * KIP_FT for m, _ in DESIGN],
+        "P_nominal": [p * KIP for _, p in NOMINAL],
+        "M_nominal": [m * KIP_FT for m, _ in NOMINAL],
+    }
+    points = {"loads": [(m * KIP_FT, p * KIP) for m, p in loads]}
+    worst = {"governing": (governing[0] * KIP_FT, governing[1] * KIP, governing[2])}
+    rest = {"cap": 900 * KIP, "mark": "C3", "plane": "28° from M_{y} to M_{x}"}
+    return fig.interaction_diagram(**(curves | points | worst | rest | given))
+
+
+def contour(*, loads: Any = ((60, 90, 300), (-80, 40, 310), (20, 20, 80)), **given: Any) -> Figure:
+    """Loads as Mx, My, P in kip-ft and kip."""
+    curve = {"Mx": [x * KIP_FT for _, x in CONTOUR], "My": [y * KIP_FT for y, _ in CONTOUR]}
+    points = {"loads": [(x * KIP_FT, y * KIP_FT, p * KIP) for x, y, p in loads]}
+    return fig.moment_contour(
+        **(curve | points | {"governing": (60 * KIP_FT, 90 * KIP_FT), "P": 300 * KIP, "mark": "C3"} | given)
+    )
+
+
+# Sixty loads spread over the diagram without a pattern a chart could be made for.
+MANY = [(12.0 + 37.0 * i % 131, 90.0 + 83.0 * i % 531) for i in range(60)]
+
+
 GALLERY: dict[str, Callable[[], Figure]] = {
     "rectangular": rectangular,
     "rectangular, four bars": lambda: rectangular(b=12.0, h=12.0, n_x=2, n_y=2, d_b=0.75),
@@ -108,4 +164,28 @@ GALLERY: dict[str, Callable[[], Figure]] = {
         emphasis=(),
     ),
     "building": building,
+    "neutral axis": neutral_axis,
+    "neutral axis, uniaxial": lambda: neutral_axis(degrees=90.0, c=14.2),
+    "neutral axis, on the centre": lambda: neutral_axis(degrees=0.0, c=9.0, n_y=3),
+    "neutral axis, shallow": lambda: neutral_axis(degrees=-37.0, c=1.2),
+    "neutral axis, outside": lambda: neutral_axis(degrees=45.0, c=33.0, a=26.0),
+    "neutral axis, 24 bars": lambda: neutral_axis(b=24.0, n_x=7, n_y=7, degrees=120.0, c=15.1),
+    "neutral axis, wall": lambda: neutral_axis(b=48.0, h=12.0, n_x=9, n_y=2, degrees=90.0, c=4.0),
+    "neutral axis, tension": lambda: neutral_axis(c=0.0),
+    "neutral axis, compression": lambda: neutral_axis(c=math.inf),
+    "neutral axis, circle": neutral_axis_round,
+    "neutral axis, 24 in a circle": lambda: neutral_axis_round(count=24, h=30.0, degrees=200.0, c=4.3),
+}
+
+# Charts have no scale of the building.
+CHARTS: dict[str, Callable[[], Figure]] = {
+    "interaction": interaction,
+    "interaction, tension": lambda: interaction(loads=[(40, -120)], governing=(40, -120, 0.6), plane=""),
+    "interaction, exceeded": lambda: interaction(governing=(360, 480, 1.2)),
+    "interaction, no load": lambda: interaction(loads=[], governing=(0, 0, 0.0)),
+    "interaction, capped": lambda: interaction(governing=(90, 720, 0.8)),
+    "interaction, many": lambda: interaction(loads=MANY),
+    "contour": contour,
+    "contour, many": lambda: contour(loads=[(m - 80.0, 0.4 * m - p / 10, p) for m, p in MANY]),
+    "contour, tension": lambda: contour(P=-40 * KIP, loads=[(60, 90, -40)]),
 }

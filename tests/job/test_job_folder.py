@@ -10,6 +10,8 @@ import pytest
 import calcpack.job
 from calcpack.errors import TableError
 from calcpack.job import Codes, Deferred, Limit, Person, Revision, find, load
+from calcpack.job.settings import ColumnSettings
+from calcpack.loads.combinations import Settings
 
 Edit = Callable[..., Path]
 
@@ -249,7 +251,7 @@ def test_byte_order_mark_is_no_problem(job_root: Path) -> None:
             "[units]",
             "[firm]\nx = 1\n[units]",
             "unknown key 'firm'",
-            "'job', 'codes', 'units', 'people', 'revision', 'basis', 'limit' or 'deferred'",
+            "'job', 'codes', 'units', 'loads', 'columns', 'people', 'revision', 'basis', 'limit' or 'deferred'",
             "remove it",
             "",
         ),
@@ -402,3 +404,41 @@ def test_givens_are_read_when_asked_for(job_root: Path) -> None:
 def test_the_table_of_contents_is_sorted_and_true() -> None:
     assert calcpack.job.__all__ == sorted(calcpack.job.__all__)
     assert all(hasattr(calcpack.job, name) for name in calcpack.job.__all__)
+
+
+# Settings of load combinations and column sheets
+
+
+def test_settings_where_none_are_stated(job_root: Path) -> None:
+    job = load(job_root)
+    assert (job.combining, job.columns) == (Settings(), ColumnSettings("every column", "a"))
+
+
+def test_settings(job_root: Path) -> None:
+    with (job_root / "job.toml").open("a", encoding="utf-8") as file:
+        file.write('[loads]\nlive_companion = 0.5\nlive_companion_basis = "L_o up to 100 psf"\nS_DS = 0.4\nrho = 1.3\n')
+        file.write('[columns]\nworked = "one of a group"\nstiffness = "b"\n')
+    job = load(job_root)
+    assert job.combining == Settings(live_companion=0.5, S_DS=0.4, rho=1.3)
+    assert job.live_basis == "L_o up to 100 psf"
+    assert job.columns == ColumnSettings("one of a group", "b")
+
+
+@pytest.mark.parametrize(
+    ("text", "message"),
+    [
+        ("[loads]\nlive_companion = 0.5\n", r"live_companion_basis is missing +why the reduction is permitted"),
+        ('[loads]\nlive_companion = 0.7\nlive_companion_basis = "x"\n', r"live_companion = 0\.7 +1\.0, or 0\.5"),
+        ("[loads]\nrho = 1.3\n", r"rho = 1\.3 +1\.0 where S_DS is not stated"),
+        ('[loads]\nS_DS = "0.4"\n', r"S_DS = '0\.4' +a number without quotes"),
+        ("[loads]\nS_DS = true\n", r"S_DS = .* +a number without quotes"),
+        ("[loads]\nsds = 1\n", r"unknown key 'sds'"),
+        ('[columns]\nworked = "all"\n', r"worked = 'all' +'every column' or 'one of a group'"),
+        ('[columns]\nstiffness = "c"\n', r"stiffness = 'c' +'a' or 'b'"),
+    ],
+)
+def test_a_setting_that_is_not_allowed(job_root: Path, text: str, message: str) -> None:
+    with (job_root / "job.toml").open("a", encoding="utf-8") as file:
+        file.write(text)
+    with pytest.raises(TableError, match=message):
+        load(job_root)

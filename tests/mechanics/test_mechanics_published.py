@@ -1,10 +1,6 @@
-"""Published columns under axial force and bending, each number a test; the data say what each source assumes."""
+"""Columns recomputed by others under axial force and bending; numbers that sources print stand in tests/published."""
 
 from __future__ import annotations
-
-import tomllib
-from pathlib import Path
-from typing import Any
 
 import numpy as np
 import pytest
@@ -14,7 +10,6 @@ from calcpack.mechanics import (
     NOMINAL,
     Section,
     Surface,
-    bar_states,
     circle,
     nominal,
     rectangle,
@@ -23,29 +18,19 @@ from calcpack.mechanics import (
 )
 from calcpack.mechanics.block import compression_block
 
-CASES = tomllib.loads((Path(__file__).parent / "interaction_cases.toml").read_text("utf-8"))["case"]
-CHECKS = [(case, check) for case in CASES for check in case["check"]]
 KIP, KIP_FT = 1e3, 12e3
 ALONG_Y = np.pi / 2
 
 
-def section_of(case: dict[str, Any]) -> Section:
-    given = dict(case["section"])
-    materials = {"f_c": given["f_c"], "f_y": given["f_y"]}
-    if case["by"] == "circle":
-        bars = ring(given["radius"], given["n"], given["A_b"], np.radians(given["first"]))
-        return circle(given["h"], bars, **materials)
-    half = given["h"] / 2 - given["d_prime"]
-    across = np.linspace(-given["b"] / 4, given["b"] / 4, given["n_face"])
-    return rectangle(given["b"], given["h"], [(x, y, given["A_b"]) for x in across for y in (-half, half)], **materials)
+def two_faces(b: float, h: float, area: float, f_c: float, f_y: float) -> Section:
+    """Bars in the two faces square to the bending, 2.5 in to their centres; `area` of each face in two bars."""
+    bars = [(x, y, area / 2) for x in (-b / 4, b / 4) for y in (2.5 - h / 2, h / 2 - 2.5)]
+    return rectangle(b, h, bars, f_c=f_c, f_y=f_y)
 
 
-def at_depth(section: Section, c: float, deducted: bool = True) -> tuple[float, float]:
-    """P and Mx, with the concrete that bars displace put back where the source leaves it in."""
+def at_depth(section: Section, c: float) -> tuple[float, float]:
     point = nominal(section, ALONG_Y, c)
-    states = bar_states(section, ALONG_Y, c)
-    back = 0.0 if deducted else 0.85 * section.f_c * section.A_b * states.in_block[:, 0]
-    return float(point.P[0] + np.sum(back)), float(point.Mx[0] + np.sum(back * section.y))
+    return float(point.P[0]), float(point.Mx[0])
 
 
 def depth_at(section: Section, eps_t: float) -> float:
@@ -53,57 +38,13 @@ def depth_at(section: Section, eps_t: float) -> float:
     return float(0.003 / (0.003 + eps_t) * d)
 
 
-def value(case: dict[str, Any], check: dict[str, Any]) -> float:
-    section, quantity, deducted = section_of(case), check["quantity"], case["by"] != "not deducted"
-    c_b = depth_at(section, section.f_y / 29e6)
-    P_b, M_b = at_depth(section, c_b, deducted)
-    if quantity in ("P_n at c", "M_n at c", "e at c", "P_n at eps_t", "M_n at eps_t"):
-        c = check["c"] if "c" in check else depth_at(section, check["eps_t"])
-        P, M = at_depth(section, c, deducted)
-        return {"P": P / KIP, "M": M / KIP_FT, "e": M / P}[quantity[0]]
-    if quantity == "P_n at e":
-        load = section.P_o / 10
-        return float(load / Surface(section, NOMINAL).check(load, load * check["e"], 0).ratio[0]) / KIP
-    if quantity == "M of pair":
-        states = bar_states(section, ALONG_Y, 7.75)
-        rows = np.argsort(-section.y)[2 * check["pair"] : 2 * check["pair"] + 2]
-        return float(abs((states.force[rows, 0] * section.y[rows]).sum())) / KIP
-    displaced = 0.0 if deducted else 0.85 * section.f_c * section.A_st
-    return {
-        "P_b": P_b / KIP,
-        "e_b": M_b / P_b,
-        "0.70 P_b": 0.70 * P_b / KIP,
-        "0.70 M_b": 0.70 * M_b / KIP,
-        "c_b": c_b,
-        "a_b": section.beta_1 * c_b,
-        "Cc": 0.85 * section.f_c * float(compression_block(section, *_axis(section.beta_1 * c_b))[0][0]) / KIP,
-        "d_extreme": section.extent[1] / 2 - float(section.y.min()),
-        "P_o": (section.P_o + displaced) / KIP,
-        "phi P_n,max": Surface(section, rule_318_19(f_y=60_000, spiral=case["by"] == "circle")).phi_P_n_max / KIP,
-    }[quantity]
-
-
 def _axis(a: float) -> tuple[np.ndarray, np.ndarray]:
     return np.array([ALONG_Y]), np.array([a])
 
 
-@pytest.mark.parametrize(
-    ("case", "check"), CHECKS, ids=[f"{case['id']} {check['quantity']} {i}" for i, (case, check) in enumerate(CHECKS)]
-)
-def test_case(case: dict[str, Any], check: dict[str, Any]) -> None:
-    deviation = 100 * (value(case, check) / check["expected"] - 1)
-    assert abs(deviation) <= check["tolerance"], f"{deviation:+.3f} %: {case['source']}"
-
-
-def test_every_case_has_a_source_and_its_provenance() -> None:
-    assert {case["source_kind"] for case in CASES} == {"published", "from memory"}
-    assert all(len(case["source"]) > 20 for case in CASES)
-    assert len(CHECKS) == 56
-
-
 def test_displaced_concrete_of_the_hicks_column_is_deducted_by_default() -> None:
     # common practice: the note to the case of Hicks, recomputed without the package: 271.1 kip and 2246 kip-in.
-    section = section_of(next(case for case in CASES if case["id"] == "col-pm-hicks-balanced"))
+    section = two_faces(12, 18, 2.0, 3000, 40_000)
     P, M = at_depth(section, depth_at(section, 40_000 / 29e6))
     assert pytest.approx(271.1, abs=0.05) == P / KIP
     assert pytest.approx(2246, abs=0.5) == M / KIP
@@ -111,7 +52,7 @@ def test_displaced_concrete_of_the_hicks_column_is_deducted_by_default() -> None
 
 def test_displaced_concrete_of_the_nilson_column_is_deducted_by_default() -> None:
     # common practice: the note to the case of Nilson, recomputed without the package.
-    section = section_of(next(case for case in CASES if case["id"] == "col-pm-nilson-8-1"))
+    section = two_faces(12, 20, 2.0, 4000, 60_000)
     P_b, M_b = at_depth(section, depth_at(section, 60_000 / 29e6))
     P_5, M_5 = at_depth(section, 5.0)
     assert (P_b / KIP, M_b / KIP_FT) == pytest.approx((352.4, 313.3), abs=0.05)

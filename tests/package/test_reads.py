@@ -10,7 +10,16 @@ from job_samples import ANCHORAGE, GIVENS, JOB, make_job
 from calcpack.job import load
 from calcpack.package.reads import Inputs, file_digest
 
-KEYS = ("job codes", "givens q_allow", "givens h_below", "anchorage T1", "anchorage T2", "columns C1", "forces C1")
+KEYS = (
+    "job codes",
+    "job settings",
+    "givens q_allow",
+    "givens h_below",
+    "anchorage T1",
+    "anchorage T2",
+    "columns C1",
+    "forces C1",
+)
 COLUMNS = """mark,shape,b [in],h [in],bars,ties,cover [in],f_c [psi],f_y [psi]
 C1,rectangular,16,16,8-#8 (3x3),#3@14,1.5,4000,60000
 """
@@ -39,6 +48,8 @@ def digests(root: Path) -> dict[str, str]:
         ("inputs/columns.csv", "#3@14", "#3@12", ["columns C1"]),
         ("inputs/forces.csv", "434", "435", ["forces C1"]),
         ("job.toml", "ACI 318-19", "ACI 318-14", ["job codes"]),
+        ("job.toml", "[units]", "[loads]\nS_DS = 0.4\n[units]", ["job settings"]),
+        ("job.toml", "[units]", '[columns]\nstiffness = "b"\n[units]', ["job settings"]),
         ("job.toml", "Marl Hythe", "Marl Hithe", []),
     ],
 )

@@ -161,8 +161,14 @@ def test_a_line_of_numbers_alone_is_printed_once() -> None:
     assert rows_of("2*3", "2", "3") == [("x", "= 2 · 3 ")]
 
 
-def test_two_fractions_stand_in_two_rows() -> None:
-    assert rows_of("a/b", "2", "3") == [("x", "= a/b "), ("", "= 2/3 ")]
+def test_two_short_fractions_stand_in_one_row() -> None:
+    assert rows_of("a/b", "2", "3") == [("x", "= a/b = 2/3 ")]
+
+
+def test_two_long_fractions_stand_in_two_rows() -> None:
+    text = " + ".join(["a/b"] * 5)
+    rows = rows_of(text, *["1,234.5 kip", "2,345.6 ft"] * 5)
+    assert [right[0] for _, right in rows].count("=") == len([left for left, _ in rows if left]) + 1 == 2
 
 
 def test_a_long_line_is_broken_into_rows_that_fit() -> None:
