@@ -19,6 +19,7 @@ LAYERS: list[set[str]] = [
     {"calcpack"},
     {"errors", "fonts"},
     {"units", "expression", "figures"},
+    {"notation"},
     {"symbols", "ledger"},
     {"formula_source"},
     {"formula"},

@@ -6,7 +6,7 @@ import re
 
 import pytest
 
-from calcpack import symbols
+from calcpack import notation, symbols
 from calcpack.symbols import NOTATION, Symbol, is_known, lookup, typeset_name
 from calcpack.typeset.names import GREEK
 from calcpack.units import ANGLE, AREA, COUNT, FORCE, LENGTH, MOMENT, RATIO, STRESS, Dimension
@@ -24,7 +24,7 @@ def test_row_is_whole(symbol: Symbol) -> None:
 
 
 def test_no_symbol_stands_twice() -> None:
-    names = [row[0] for row in symbols._ROWS]
+    names = [row[0] for row in notation.ROWS]
     assert sorted(names) == sorted(set(names))
 
 

@@ -167,42 +167,42 @@ def centroid_y(*, u_y: Ratio, a: Length, h: Length) -> Length:
 @formula(_GEOMETRY)
 def cross_product(*, x: Length, y: Length, x_before: Length, y_before: Length) -> Area:
     """Twice the area between a side of the block and the centroid, from the vertex before to this one."""
-    A_v = x_before * y - x * y_before
-    return A_v
+    A_j = x_before * y - x * y_before
+    return A_j
 
 
 @formula(_GEOMETRY)
-def moment_of_vertex_x(*, A_v: Area, x: Length, x_before: Length) -> Volume:
+def moment_of_vertex_x(*, A_j: Area, x: Length, x_before: Length) -> Volume:
     """Six times the first moment about y of that triangle."""
-    S_vx = A_v * (x_before + x)
-    return S_vx
+    S_jx = A_j * (x_before + x)
+    return S_jx
 
 
 @formula(_GEOMETRY)
-def moment_of_vertex_y(*, A_v: Area, y: Length, y_before: Length) -> Volume:
+def moment_of_vertex_y(*, A_j: Area, y: Length, y_before: Length) -> Volume:
     """Six times the first moment about x of that triangle."""
-    S_vy = A_v * (y_before + y)
-    return S_vy
+    S_jy = A_j * (y_before + y)
+    return S_jy
 
 
 @formula(_GEOMETRY)
-def area_polygon(*, A_v_sum: Area) -> Area:
+def area_polygon(*, A_j_sum: Area) -> Area:
     """Area of the block, from its vertices counterclockwise."""
-    A_c = A_v_sum / 2
+    A_c = A_j_sum / 2
     return A_c
 
 
 @formula(_GEOMETRY)
-def centroid_x_polygon(*, S_vx_sum: Volume, A_c: Area) -> Length:
+def centroid_x_polygon(*, S_jx_sum: Volume, A_c: Area) -> Length:
     """Centroid of the block along x."""
-    x_c = S_vx_sum / (6 * A_c)
+    x_c = S_jx_sum / (6 * A_c)
     return x_c
 
 
 @formula(_GEOMETRY)
-def centroid_y_polygon(*, S_vy_sum: Volume, A_c: Area) -> Length:
+def centroid_y_polygon(*, S_jy_sum: Volume, A_c: Area) -> Length:
     """Centroid of the block along y."""
-    y_c = S_vy_sum / (6 * A_c)
+    y_c = S_jy_sum / (6 * A_c)
     return y_c
 
 

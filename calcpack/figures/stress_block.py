@@ -8,7 +8,7 @@ from dataclasses import dataclass, field, replace
 from itertools import combinations, pairwise
 
 from calcpack.figures.bars import Bar
-from calcpack.figures.clearing import Box, Obstacles, broken, centred, inked
+from calcpack.figures.clearing import Box, Obstacles, broken, centred
 from calcpack.figures.drawing import (
     BAR,
     CENTRE,
@@ -28,6 +28,7 @@ from calcpack.figures.drawing import (
     arc,
 )
 from calcpack.figures.lettering import text_width
+from calcpack.figures.numerals import numbered
 from calcpack.figures.outline import Outline, dot
 from calcpack.figures.sections import bar_inside
 from calcpack.figures.trade import Refusal, feet_inches, scale_that_fits
@@ -142,7 +143,9 @@ class _View:
             self.over.path(path)
         for level in (self.top - self.c, self.top - self.a):
             self.over.breakable += pairwise(self._across(level))
-        numerals = self._numerals(placed)
+        self.over.within = (-self.outline.x, -self.outline.y, self.outline.x, self.outline.y)
+        self.drawing.labels += numbered(placed, self.over, circular=self.outline.round)
+        self.over.within, numerals = None, list(self.over.boxes)
         self._block(numerals)
         self._centre_lines(numerals)
         # Grey, so that open and filled bars are told apart beside it.
@@ -151,9 +154,10 @@ class _View:
         for centre, radius in placed:
             self._bar(centre, radius)
         self._outline()
-        if 0 < self.a < self.depth:
-            self._cut(numerals)
+        asides = self._dimensions(numerals) if 0 < self.a < self.depth else []
         self._lettered_axes()
+        if asides:
+            self._names(asides, numerals)
 
     def _across(self, level: float) -> list[Point]:
         """The line square to `theta` at a level, inside the section; no points where it misses."""
@@ -174,25 +178,6 @@ class _View:
         turns = ((x - radius, y - radius, 0), (radius - x, y - radius, 90), (radius - x, radius - y, 180))
         corners = [arc((i, j), radius, start, start + 90) for i, j, start in (*turns, (x - radius, radius - y, 270))]
         return [*(point for corner in corners for point in corner), corners[0][0]]
-
-    def _numerals(self, placed: Sequence[tuple[Point, float]]) -> list[Box]:
-        """Number the bars on the inside of their ring; returns what the numerals cover."""
-        self.over.within = (-self.outline.x, -self.outline.y, self.outline.x, self.outline.y)
-        far = max(abs(x) for (x, _), _ in placed), max(abs(y) for (_, y), _ in placed)
-        for number, (centre, radius) in enumerate(placed, start=1):
-            inward = _inward(centre, radius, far, self.outline.round)
-            labels = list(_beside(str(number), centre, radius, inward))
-            # One that is nearer to another bar would be read as that bar's.
-            own = [label for label in labels if self._nearest(label, placed) == centre]
-            self.drawing.labels.append(self.over.place(own or labels))
-        self.over.within = None
-        return list(self.over.boxes)
-
-    def _nearest(self, label: Label, placed: Sequence[tuple[Point, float]]) -> Point:
-        """The centre of the bar a numeral stands nearest to."""
-        left, bottom, right, top = inked(label)
-        middle = ((left + right) / 2, (bottom + top) / 2)
-        return min((centre for centre, _ in placed), key=lambda centre: math.dist(centre, middle))
 
     def _block(self, numerals: Sequence[Box]) -> None:
         """The compression block and its hatching."""
@@ -241,31 +226,41 @@ class _View:
         else:
             self.drawing.rectangle(-x, -y, x, y, fill="", name="outline")
 
-    def _cut(self, numerals: Sequence[Box]) -> None:
-        """Edge of the block and neutral axis with their depths and names."""
+    def _dimensions(self, numerals: Sequence[Box]) -> list[float]:
+        """Edge of the block, and the dimension lines of a and, where the axis is seen, of c: how far out they stand."""
         edge, level = self.top - self.a, self.top - self.c
         start, end = self._across(edge)
         for piece in broken(start, end, numerals):
             self.drawing.stroke(*piece, pen=BAR, name="edge")
-        away = self._dimension(edge, self.side)
+        asides = [self._dimension(edge, self.side)]
         if self.c < self.depth:
-            start = self.at(level, self._dimension(level, self.other_side, meets_axis=True) + 0.05, self.other_side)
-            end = self._named_end(level)
-            self.over.path([start, end])
-            for piece in broken(start, end, numerals):
-                self.drawing.stroke(*piece, pen=_AXIS, name="neutral axis")
-            self._write(
-                f"c = {self.c * self.drawing.scale:.2f} in", level, dot(start, self.other_side) - 0.05, self.other_side
-            )
-        self._write(f"block, a = {self.a * self.drawing.scale:.2f} in", edge, away, self.side)
+            asides.append(self._dimension(level, self.other_side, meets_axis=True))
+            self.over.path([self._axis_start(asides[1]), self._axis_exit()])
+        return asides
 
-    def _named_end(self, level: float) -> Point:
+    def _axis_start(self, aside: float) -> Point:
+        """Where the neutral axis starts: past the line of its dimension."""
+        return self.at(self.top - self.c, aside + 0.05, self.other_side)
+
+    def _axis_exit(self) -> Point:
+        """Where the neutral axis leaves the section on the side of its name."""
+        return max(self._across(self.top - self.c), key=lambda end: dot(end, self.side))
+
+    def _names(self, asides: Sequence[float], numerals: Sequence[Box]) -> None:
+        """The neutral axis to its name, and the texts of the dimensions."""
+        if len(asides) > 1:
+            for piece in broken(self._axis_start(asides[1]), self._named_end(), numerals):
+                self.drawing.stroke(*piece, pen=_AXIS, name="neutral axis")
+            self._write(f"c = {self.c * self.drawing.scale:.2f} in", self.top - self.c, asides[1], self.other_side)
+        self._write(f"block, a = {self.a * self.drawing.scale:.2f} in", self.top - self.a, asides[0], self.side)
+
+    def _named_end(self) -> Point:
         """Write the name of the neutral axis past the section, and return where the axis ends before it."""
-        exit_ = max(self._across(level), key=lambda end: dot(end, self.side))
-        ends = [_stepped(exit_, self.side, 0.1 * step) for step in range(1, 16)]
+        ends = [_stepped(self._axis_exit(), self.side, 0.1 * step) for step in range(1, 16)]
         labels = [_past("neutral axis", end, self.side) for end in ends]
         best = self.over.place(labels)
         self.drawing.labels.append(best)
+        self.over.path([self._axis_exit(), ends[labels.index(best)]])
         return ends[labels.index(best)]
 
     def _dimension(self, level: float, side: Point, *, meets_axis: bool = False) -> float:
@@ -320,27 +315,6 @@ def _past(text: str, beside: Point, side: Point, turn: int = 0) -> Label:
     along, across = text_width(text, TEXT) / 2, 0.36 * TEXT / 72
     x, y = (across, along) if turn else (along, across)
     return centred(text, _stepped(beside, side, _CLEAR + abs(side[0]) * x + abs(side[1]) * y), TEXT, turn)
-
-
-def _inward(centre: Point, radius: float, far: Point, round_: bool) -> float:
-    """The direction from a bar to the inside of its ring, rad; down for a bar in the middle."""
-    x, y = centre
-    if round_:
-        return math.atan2(-y, -x) if math.hypot(x, y) > radius else -math.pi / 2
-    across = -math.copysign(1.0, x) if abs(x) > max(far[0] - radius, radius) else 0.0
-    up = -math.copysign(1.0, y) if abs(y) > max(far[1] - radius, radius) else 0.0
-    return math.atan2(up, across) if across or up else -math.pi / 2
-
-
-def _beside(text: str, centre: Point, radius: float, inward: float) -> Iterator[Label]:
-    """A numeral beside a bar: inward first, then turned from there, then further off."""
-    half = text_width(text, SMALL) / 2, 0.35 * SMALL / 72
-    for gap in (0.03, 0.07, 0.12):
-        for turn in (0, 25, -25, 45, -45, 70, -70, 90, -90, 135, -135, 180):
-            way = inward + math.radians(turn)
-            x, y = math.cos(way), math.sin(way)
-            off = radius + gap + abs(x) * half[0] + abs(y) * half[1]
-            yield centred(text, _stepped(centre, (x, y), off), SMALL)
 
 
 def _scale(width: float, h: float, bars: Sequence[tuple[float, float, float]]) -> float:

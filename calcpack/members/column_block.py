@@ -101,8 +101,8 @@ _VERTICES = Tabulation(
     title="Vertices of the block, counterclockwise",
     label="vertex",
     formulas=(stress_block.cross_product, stress_block.moment_of_vertex_x, stress_block.moment_of_vertex_y),
-    columns=(Column("x", 4), Column("y", 4), Column("A_v", 2), Column("S_vx", 1), Column("S_vy", 1)),
-    totals={"A_v": "A_v_sum", "S_vx": "S_vx_sum", "S_vy": "S_vy_sum"},
+    columns=(Column("x", 4), Column("y", 4), Column("A_j", 2), Column("S_jx", 1), Column("S_jy", 1)),
+    totals={"A_j": "A_j_sum", "S_jx": "S_jx_sum", "S_jy": "S_jy_sum"},
 )
 _CORNERS = ((-1, -1), (1, -1), (1, 1), (-1, 1))
 _HALF = {1: "0.5*", -1: "-0.5*"}

@@ -9,7 +9,10 @@ import pytest
 from calcpack import aci318
 from calcpack.formula import Formula
 
-MODULES = ("development", "factors", "hooks", "heads", "compression", "laps", "columns", "ties")
+MODULES = (
+    *("development", "factors", "hooks", "heads", "compression", "laps", "columns", "ties", "slenderness", "stiffness"),
+    *("stress_block", "compatibility", "bending", "shear", "special_frames", "lateral_support"),
+)
 
 
 def all_formulas() -> list[tuple[str, Formula]]:

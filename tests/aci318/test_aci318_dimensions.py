@@ -16,7 +16,10 @@ from calcpack.units import COUNT, LENGTH, RATIO, STRESS, Dimension, coherent_uni
 DRAWS = 20
 
 # Written units other than the coherent ones: a formula that hides a unit gives another number in them.
-_OTHER = {"in": "ft", "psi": "ksi", "in^2": "ft^2", "lb": "kip", "in^3": "ft^3"}
+_OTHER = {
+    **{"in": "ft", "in^2": "ft^2", "in^3": "ft^3", "in^4": "ft^4"},
+    **{"psi": "ksi", "lb": "kip", "lb*in": "kip*ft", "lb*in^2": "kip*ft^2"},
+}
 
 
 def _sqrt(value: Any) -> Any:

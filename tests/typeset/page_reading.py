@@ -88,7 +88,7 @@ def _element(element: ElementTree.Element) -> list[Token]:
 
 _TYPST = re.compile(
     r'\s*(?:#v\((?P<value>(?:"[^"]*"(?:, )?)+)\)|"(?P<quoted>[^"]*)"'
-    r"|(?P<word>dot\.op|[^\W\d_]+)(?P<tail>'*(?:_(?:\"[^\"]*\"|\w))?)"
+    r"|(?P<word>dot\.op|[^\W\d_]+|\d+)(?P<tail>'*(?:_(?:\"[^\"]*\"|\w))?)"
     r"|(?P<sign><=|>=|!=|[-+<>=(),:]))"
 )
 _TYPST_SIGNS = {"dot.op": "·", "comma": ",", "thin": "·", "-": "−", "<=": "≤", ">=": "≥", "!=": "≠"}
