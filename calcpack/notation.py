@@ -249,6 +249,7 @@ ROWS: tuple[tuple[str, str, Dimension, str, str], ...] = (
     ("x_s", "x_s", LENGTH, "distance of the outer rows of bars from the y axis", "positive"),
     ("n_x", "n_x", COUNT, "number of bars along each face parallel to x, corners included", "positive"),
     ("n_y", "n_y", COUNT, "number of bars along each face parallel to y, corners included", "positive"),
+    ("EI", "E I", RIGIDITY, "flexural stiffness under loads of short duration", "positive"),
     ("EI_eff", "E I_{eff}", RIGIDITY, "effective flexural stiffness", "positive"),
     ("beta_dns", r"\beta_{dns}", RATIO, "sustained share of the factored axial force", "nonnegative"),
     ("P_sustained", "P_{sustained}", FORCE, "factored sustained axial force, compression positive", "any"),

@@ -5,7 +5,27 @@ from __future__ import annotations
 import importlib
 from typing import Any
 
-__all__ = ["bars", "columns", "compression", "development", "editions", "factors", "heads", "hooks", "laps", "ties"]
+__all__ = [
+    "bars",
+    "bending",
+    "columns",
+    "compatibility",
+    "compression",
+    "development",
+    "editions",
+    "effective_length",
+    "factors",
+    "heads",
+    "hooks",
+    "laps",
+    "lateral_support",
+    "shear",
+    "slenderness",
+    "special_frames",
+    "stiffness",
+    "stress_block",
+    "ties",
+]
 
 
 def __getattr__(name: str) -> Any:

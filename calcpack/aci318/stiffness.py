@@ -120,5 +120,6 @@ def stiffness_gross(*, E_c: Stress, I_g: SecondMoment, beta_dns: Ratio) -> Rigid
 @formula(*_both("6.6.4.4.4(b)"), limits=(_SHARE,))
 def stiffness_bars(*, E_c: Stress, I_g: SecondMoment, E_s: Stress, I_se: SecondMoment, beta_dns: Ratio) -> Rigidity:
     """Effective flexural stiffness from the gross section and its bars."""
-    EI_eff = (0.2 * E_c * I_g + E_s * I_se) / (1 + beta_dns)
+    EI = 0.2 * E_c * I_g + E_s * I_se
+    EI_eff = EI / (1 + beta_dns)
     return EI_eff

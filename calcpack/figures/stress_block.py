@@ -157,7 +157,7 @@ class _View:
         asides = self._dimensions(numerals) if 0 < self.a < self.depth else []
         self._lettered_axes()
         if asides:
-            self._names(asides, numerals)
+            self._names(asides)
 
     def _across(self, level: float) -> list[Point]:
         """The line square to `theta` at a level, inside the section; no points where it misses."""
@@ -235,7 +235,7 @@ class _View:
         asides = [self._dimension(edge, self.side)]
         if self.c < self.depth:
             asides.append(self._dimension(level, self.other_side, meets_axis=True))
-            self.over.path([self._axis_start(asides[1]), self._axis_exit()])
+            self.over.path([self._axis_start(asides[1]), _stepped(self._axis_exit(), self.side, 0.1)])
         return asides
 
     def _axis_start(self, aside: float) -> Point:
@@ -246,10 +246,11 @@ class _View:
         """Where the neutral axis leaves the section on the side of its name."""
         return max(self._across(self.top - self.c), key=lambda end: dot(end, self.side))
 
-    def _names(self, asides: Sequence[float], numerals: Sequence[Box]) -> None:
+    def _names(self, asides: Sequence[float]) -> None:
         """The neutral axis to its name, and the texts of the dimensions."""
         if len(asides) > 1:
-            for piece in broken(self._axis_start(asides[1]), self._named_end(), numerals):
+            written = list(self.over.boxes)
+            for piece in broken(self._axis_start(asides[1]), self._named_end(), written):
                 self.drawing.stroke(*piece, pen=_AXIS, name="neutral axis")
             self._write(f"c = {self.c * self.drawing.scale:.2f} in", self.top - self.c, asides[1], self.other_side)
         self._write(f"block, a = {self.a * self.drawing.scale:.2f} in", self.top - self.a, asides[0], self.side)

@@ -17,9 +17,9 @@ DRAWS = 20
 
 # Written units other than the coherent ones: a formula that hides a unit gives another number in them.
 _OTHER = {
-    **{"in": "ft", "in^2": "ft^2", "in^3": "ft^3", "in^4": "ft^4"},
-    **{"psi": "ksi", "lb": "kip", "lb*in": "kip*ft", "lb*in^2": "kip*ft^2"},
-}
+    "in": "ft", "in^2": "ft^2", "in^3": "ft^3", "in^4": "ft^4",
+    "psi": "ksi", "lb": "kip", "lb*in": "kip*ft", "lb*in^2": "kip*ft^2",
+}  # fmt: skip
 
 
 def _sqrt(value: Any) -> Any:

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Callable, Mapping, Sequence
 from dataclasses import dataclass
 from typing import Any
 
@@ -11,6 +12,7 @@ from calcpack.aci318.editions import Edition, edition
 from calcpack.formula import Formula
 from calcpack.ledger import passes
 from calcpack.members.termination import Termination
+from calcpack.tabulation import FloatBench, Row, Tabulated, Tabulation, tabulate
 
 
 @dataclass(frozen=True)
@@ -21,6 +23,23 @@ class Given:
     value: float
     means: str
     source: str
+
+
+@dataclass(frozen=True)
+class Solved:
+    """A value as it was found by iteration."""
+
+    symbol: str
+    value: float
+    solved_from: tuple[float, ...]
+
+
+@dataclass(frozen=True)
+class Table:
+    """A table as it was worked."""
+
+    table: Tabulation
+    made: Tabulated[float]
 
 
 @dataclass(frozen=True)
@@ -48,6 +67,10 @@ class RecordingPad:
         self.clauses: list[tuple[str, Formula]] = []
         self.givens: list[Given] = []
         self.verdicts: list[Verdict] = []
+        self.solutions: list[Solved] = []
+        self.confirmed: list[float] = []
+        self.tables: list[Table] = []
+        self.drawings: list[Callable[[], object]] = []
 
     def given(self, symbol: str, value: float, means: str, source: str) -> float:
         assert means.strip()
@@ -66,6 +89,36 @@ class RecordingPad:
             self.values[recorded.line.target] = recorded.value
         self.clauses.append((recording.lines[-1].line.target, formula))
         return recording.value
+
+    def tabulate(self, table: Tabulation, rows: Sequence[Row[float]], shared: Mapping[str, float]) -> Tabulated[float]:
+        made = tabulate(table, rows, shared, FloatBench())
+        self.steps.append(("table", table.title))
+        self.clauses += [(formula.result_name, formula) for formula in table.formulas]
+        self.tables.append(Table(table, made))
+        return made
+
+    def solved(
+        self, symbol: str, value: float, means: str, method: str, clause: str, solved_from: Sequence[float]
+    ) -> float:
+        assert means.strip()
+        assert method.strip()
+        assert clause.strip()
+        assert solved_from
+        self.steps.append(("solved", symbol))
+        self.values[symbol] = value
+        self.solutions.append(Solved(symbol, value, tuple(solved_from)))
+        return value
+
+    def confirm(self, solved: Sequence[float], by: Sequence[float]) -> None:
+        assert solved
+        assert by
+        assert max(map(abs, by)) <= 1e-6
+        self.steps.append(("confirmed", f"{len(solved)} by {len(by)}"))
+        self.confirmed += by
+
+    def figure(self, draw: Callable[[], object]) -> None:
+        self.steps.append(("figure", ""))
+        self.drawings.append(draw)
 
     def number(self, value: float) -> float:
         return value

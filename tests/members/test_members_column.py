@@ -9,7 +9,7 @@ import pytest
 
 from calcpack.aci318.editions import Edition
 from calcpack.errors import RangeError
-from calcpack.members.column import axial_capacity, check, owed
+from calcpack.members.column import Context, check, owed, work_column
 from calcpack.members.column_rules import ColumnWorking
 from calcpack.members.column_section import Bars, Column, Force, Ties
 from calcpack.members.pad import FloatPad
@@ -28,18 +28,18 @@ def by_name(results: list[CheckResult]) -> dict[str, CheckResult]:
 
 
 def one(column: Column, name: str, edition: Edition) -> CheckResult:
-    return by_name(check(column, FORCES, edition))[name]
+    return by_name(check(column, FORCES, Context(edition)))[name]
 
 
 def test_checks_of_a_tied_column(each: Edition) -> None:
-    assert list(by_name(check(TIED, FORCES, each))) == [
+    assert list(by_name(check(TIED, FORCES, Context(each)))) == [
         *["axial strength", "reinforcement ratio", "number of bars", "bar spacing"],
         *["tie size", "tie spacing", "lateral support of bars"],
     ]
 
 
 def test_checks_of_a_spiral_column(each: Edition) -> None:
-    assert list(by_name(check(ROUND, FORCES, each)))[4:] == ["spiral size", "spiral pitch", "spiral ratio"]
+    assert list(by_name(check(ROUND, FORCES, Context(each))))[4:] == ["spiral size", "spiral pitch", "spiral ratio"]
 
 
 def test_axial_strength_of_a_tied_column(each: Edition) -> None:
@@ -58,12 +58,12 @@ def test_axial_strength_of_a_spiral_column(each: Edition) -> None:
 
 
 def test_axial_strength_without_forces_has_no_verdict(each: Edition) -> None:
-    result = by_name(check(TIED, [], each))["axial strength"]
+    result = by_name(check(TIED, [], Context(each)))["axial strength"]
     assert (result.ratio, result.verdict, result.combination) == (None, "", "")
 
 
 def test_tension_is_not_a_demand_on_axial_strength(each: Edition) -> None:
-    result = by_name(check(TIED, [Force("uplift", -50_000.0)], each))["axial strength"]
+    result = by_name(check(TIED, [Force("uplift", -50_000.0)], Context(each)))["axial strength"]
     assert (result.ratio, result.verdict) == (0.0, "OK")
 
 
@@ -74,7 +74,7 @@ def test_high_grade_bars_count_up_to_80_ksi(e14: Edition, e19: Edition, steps: A
     assert P_o == pytest.approx(1_483_200.0)
     assert steps.reasons == ["Bars above Grade 80 (ACI 318-19 22.4.2.1)."]
     with pytest.raises(RangeError, match=r"f_y = 100,000 psi +allowed up to 80,000 psi \(ACI 318-14 Table 20.2.2.4a\)"):
-        check(high, FORCES, e14)
+        check(high, FORCES, Context(e14))
 
 
 def test_steps_of_the_axial_strength(each: Edition, steps: Any) -> None:
@@ -216,13 +216,13 @@ def test_spiral_size(each: Edition) -> None:
 )
 def test_impossible_columns_are_refused(changes: dict[str, Any], message: str, each: Edition) -> None:
     with pytest.raises(RangeError, match=message):
-        check(replace(TIED, **changes), FORCES, each)
+        check(replace(TIED, **changes), FORCES, Context(each))
 
 
 def test_all_problems_of_a_column_come_at_once(each: Edition) -> None:
     bad = replace(TIED, f_c=4.0, f_y=60.0, cover=0.0, file="inputs/columns.csv", row=3)
     with pytest.raises(RangeError, match=r"(?s)column C1.*inputs/columns.csv, row 3") as caught:
-        check(bad, FORCES, each)
+        check(bad, FORCES, Context(each))
     assert len(caught.value.problems) == 3
 
 

@@ -9,7 +9,7 @@ import pytest
 
 from calcpack.aci318.editions import Edition, edition
 from calcpack.errors import RangeError
-from calcpack.members.column import check
+from calcpack.members.column import Context, check
 from calcpack.members.column_section import Bars, Column, Force, Ties
 
 TIED = Column("C1", 16.0, 16.0, Bars(8, 9, 3, 3), Ties("ties", 3, 12.0), 1.5, 4_000.0, 60_000.0)
@@ -19,7 +19,7 @@ FORCES = [Force("1.4D", 100_000.0)]
 
 def accepted(column: Column, one: Edition) -> bool:
     try:
-        check(column, FORCES, one)
+        check(column, FORCES, Context(one))
     except RangeError:
         return False
     return True
@@ -97,10 +97,10 @@ def test_largest_yield_strength_by_edition(name: str, f_y: float, fine: bool) ->
 def test_what_is_wrong_in_kind_is_told_before_what_does_not_fit(each: Edition) -> None:
     small = replace(TIED, b=5.0, ties=Ties("ties", 3, 0.3))
     with pytest.raises(RangeError) as caught:
-        check(small, FORCES, each)
+        check(small, FORCES, Context(each))
     assert len(caught.value.problems) == 2
     with pytest.raises(RangeError) as caught:
-        check(replace(small, bars=Bars(8, 12, 3, 3), cover=-1.0), FORCES, each)
+        check(replace(small, bars=Bars(8, 12, 3, 3), cover=-1.0), FORCES, Context(each))
     assert [problem.given for problem in caught.value.problems] == ["cover = -1 in", "bars: #12"]
 
 
@@ -110,7 +110,7 @@ def test_what_is_wrong_in_kind_is_told_before_what_does_not_fit(each: Edition) -
 def test_sizes_that_are_not_made(size: int, name: str | None, each: Edition) -> None:
     column = replace(TIED, b=30.0, h=30.0, bars=Bars(8, size, 3, 3))
     if name is None:
-        assert check(column, FORCES, each)
+        assert check(column, FORCES, Context(each))
     else:
         with pytest.raises(RangeError, match=rf"{name}: #{size} +one of #3, #4, .*#18 \(ASTM A615, A706\)"):
-            check(column, FORCES, each)
+            check(column, FORCES, Context(each))

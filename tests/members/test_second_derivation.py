@@ -208,7 +208,7 @@ def test_the_same_axial_strength_ties_and_spirals(name: str, tmp_path: Path) -> 
     root = make_job(tmp_path / "job", columns=column_table(columns, MIXED))
     for one, row in zip(columns, read_columns(root), strict=True):
         found: dict[str, CheckResult] = {}
-        for result in column.check(row, [], edition(f"ACI 318-{name}")):
+        for result in column.check(row, [], column.Context(edition(f"ACI 318-{name}"))):
             found[result.check] = result
         strength = [found["axial strength"].values[symbol] for symbol in ("P_o", "phi_P_n_max")]
         assert strength == [(pytest.approx(value / 1000, rel=1e-9), "kip") for value in axial_strength(one)]
