@@ -60,10 +60,13 @@ def _parser() -> argparse.ArgumentParser:
         command.set_defaults(run=run)
         if name != "validation":
             command.add_argument("job", nargs="?", default=".", type=Path, help="job folder (default: where you stand)")
-        if name == "check":
+        if name in ("check", "bars"):
             command.add_argument("--json", action="store_true", help="one JSON object on standard output")
         if name == "trace":
             command.add_argument("name", help="an entry id such as A-03/l_d, or a symbol")
+        if name == "bars":
+            command.add_argument("mark", help="the mark of a column in the schedule")
+            command.add_argument("--limit", type=int, default=10, metavar="N", help="list at most N (default: 10)")
     return parser
 
 
@@ -97,6 +100,19 @@ def _check(options: argparse.Namespace) -> int:
     else:
         print(check_text(job, checks, found))
     return _status(job, found)
+
+
+def _bars(options: argparse.Namespace) -> int:
+    from calcpack.package.arranging import arrange, bars_json, bars_text
+
+    job = _job(options)
+    _progress()(f"looking through the bars of {options.mark}")
+    arranged = arrange(job, options.mark, options.limit)
+    if options.json:
+        print(json.dumps(bars_json(job, arranged), indent=1, ensure_ascii=False, allow_nan=False))
+    else:
+        print(bars_text(job, arranged))
+    return OK if arranged.found.found else NOT_OK
 
 
 def _draft(options: argparse.Namespace) -> int:
@@ -170,6 +186,7 @@ def _progress(stream: TextIO | None = None) -> Callable[[str], None]:
 _COMMANDS: tuple[tuple[str, Callable[[argparse.Namespace], int], str], ...] = (
     ("start", _start, "make a job folder that already issues"),
     ("check", _check, "check the members of the schedules"),
+    ("bars", _bars, "list arrangements of longitudinal bars that would satisfy every check of a column"),
     ("draft", _draft, "run the sheets and write the package as it stands to draft/"),
     ("issue", _issue, "issue the newest revision of job.toml to record/issued/"),
     ("trace", _trace, "print where a value comes from and what it goes into"),

@@ -74,7 +74,11 @@ def test_a_column_gives_what_the_check_gives(sheet: Sheet, root: Path, shown: Sh
     expected = [one.values["phi_P_n_max"][0] for one in results if one.check == "axial strength"]
     assert sorted(value / 1000 for value in strength.values()) == pytest.approx(sorted(expected))
     reads = [key for item in shown.items for key, _ in item["reads"]]
-    assert reads == ["job codes", "columns C1", "forces C1", "columns C2", "forces C2"]
+    assert reads == [
+        "job codes",
+        *["columns C1", "forces C1", "job settings"],
+        *["columns C2", "forces C2", "job settings"],
+    ]
     inputs = Inputs(load(root))
     assert all(inputs.digest(key) == digest for item in shown.items for key, digest in item["reads"])
     assert agree(sheet) > 40
@@ -86,6 +90,28 @@ def test_every_verdict_of_the_check_stands_on_the_sheet(sheet: Sheet, root: Path
     owed = sorted(one.ratio for one in check_members(load(root)).results if one.mark == "C1" and one.ratio is not None)
     for ratio in owed:
         assert any(abs(ratio - one) < 1e-9 for one in found), ratio
+
+
+UNFACTORED = """mark,load,P [kip],Mx [kip*ft],My [kip*ft]
+C1,D,100,12,0
+C1,L,60,10,4
+C2,D,148,0,0
+"""
+
+
+def test_a_column_of_unfactored_forces_is_combined(sheet: Sheet, root: Path, shown: Shown) -> None:
+    (root / "inputs" / "forces.csv").write_text(UNFACTORED, "utf-8")
+    sheet.column("C1")
+    # ASCE 7-16 2.3.1, hand: 1.4 * 100 = 140 kip; 1.2 * 100 + 1.6 * 60 = 216 kip.
+    assert {round(entry.value / 1000, 6) for entry in sheet.ledger if entry.symbol == "P_u"} <= {140.0, 216.0, 90.0}
+    (axial,) = [entry for entry in sheet.ledger if entry.means.startswith("C1: axial force within")]
+    demand = sheet.ledger[axial.demand]
+    assert demand.value == pytest.approx(216_000.0)
+    assert demand.expression == "1.2*P_D + 1.6*P_L"
+    results = [one for one in check_members(load(root)).results if one.mark == "C1"]
+    assert axial.ratio == [one.ratio for one in results if one.check == "axial strength"][0]
+    assert any("Combinations considered" in item["parts"][0]["text"] for item in shown.of("note"))
+    agree(sheet)
 
 
 def test_a_mark_that_is_not_there(sheet: Sheet) -> None:

@@ -8,9 +8,10 @@ from itertools import pairwise
 
 from calcpack.figures.drawing import Label, Point
 
-__all__ = ["Box", "Obstacles", "broken", "centred", "inked", "inside_part"]
+__all__ = ["BLOCKED", "Box", "Obstacles", "broken", "centred", "inked", "inside_part"]
 
 Box = tuple[float, float, float, float]
+BLOCKED, _BROKEN = 100, 10
 _GAP = 0.02
 _HANGING = frozenset("gjpqy,;_()[]Q")
 
@@ -92,7 +93,7 @@ class Obstacles:
         self.lines += pairwise(points)
 
     def cost(self, box: Box) -> int:
-        """How badly a box stands: 100 for each piece of lettering, disc or line it covers, 10 for a breakable line."""
+        """How badly a box stands: `BLOCKED` for each thing it covers, a tenth of it for each breakable line."""
         wide = _grown(box, _GAP)
         outside = self.within is not None and not _within(box, self.within)
         letters = sum(_overlap(wide, other) for other in self.boxes)
@@ -101,7 +102,7 @@ class Obstacles:
             sum(inside_part(start, end, wide) is not None for start, end in group)
             for group in (self.lines, self.breakable)
         )
-        return 100 * (outside + letters + discs + lines) + 10 * breakable
+        return BLOCKED * (outside + letters + discs + lines) + _BROKEN * breakable
 
     def place(self, candidates: Iterable[Label]) -> Label:
         """The first of the labels that stand best; it becomes an obstacle itself."""

@@ -5,12 +5,13 @@ from __future__ import annotations
 import math
 from collections.abc import Iterator, Sequence
 
-from calcpack.figures.clearing import Obstacles, centred, inked
+from calcpack.figures.clearing import BLOCKED, Obstacles, centred, inked
 from calcpack.figures.drawing import SMALL, Label, Point
 from calcpack.figures.lettering import text_width
 
 __all__ = ["numbered"]
 
+_GAPS = (0.03, 0.05, 0.08, 0.12, 0.17)
 Disc = tuple[Point, float]
 
 
@@ -19,11 +20,14 @@ def numbered(bars: Sequence[Disc], over: Obstacles, *, circular: bool) -> list[L
     far = max(abs(x) for (x, _), _ in bars), max(abs(y) for (_, y), _ in bars)
     found = []
     for number, (centre, radius) in enumerate(bars, start=1):
-        labels = list(_beside(str(number), centre, radius, _inward(centre, radius, far, circular)))
+        inward = _inward(centre, radius, far, circular)
+        rings = [list(_beside(str(number), centre, radius + gap, inward)) for gap in _GAPS]
         # One that is about as near to another bar could be read as that bar's.
         others = [other for other, _ in bars if other != centre]
-        own = [label for label in labels if _is_nearest(label, centre, others)]
-        found.append(over.place(own or labels))
+        own = [[label for label in ring if _is_nearest(label, centre, others)] for ring in rings]
+        # Further off only where nothing but a line to be broken would not do.
+        free = next((ring for ring in own if any(over.cost(inked(label)) < BLOCKED for label in ring)), None)
+        found.append(over.place(free or [label for ring in rings for label in ring]))
     return found
 
 
@@ -43,12 +47,11 @@ def _inward(centre: Point, radius: float, far: Point, circular: bool) -> float:
     return math.atan2(up, across) if across or up else -math.pi / 2
 
 
-def _beside(text: str, centre: Point, radius: float, inward: float) -> Iterator[Label]:
-    """A numeral beside a bar: inward first, then turned from there, then further off."""
+def _beside(text: str, centre: Point, off: float, inward: float) -> Iterator[Label]:
+    """A numeral beside a bar, `off` from its centre: inward first, then turned from there."""
     half = text_width(text, SMALL) / 2, 0.35 * SMALL / 72
-    for gap in (0.03, 0.05, 0.08, 0.12, 0.17):
-        for turn in (0, 15, -15, 30, -30, 45, -45, 60, -60, 75, -75, 90, -90, 135, -135, 180):
-            way = inward + math.radians(turn)
-            x, y = math.cos(way), math.sin(way)
-            off = radius + gap + abs(x) * half[0] + abs(y) * half[1]
-            yield centred(text, (centre[0] + x * off, centre[1] + y * off), SMALL)
+    for turn in (0, 15, -15, 30, -30, 45, -45, 60, -60, 75, -75, 90, -90):
+        way = inward + math.radians(turn)
+        x, y = math.cos(way), math.sin(way)
+        reach = off + abs(x) * half[0] + abs(y) * half[1]
+        yield centred(text, (centre[0] + x * reach, centre[1] + y * reach), SMALL)

@@ -109,6 +109,9 @@ class _Checks(Generic[T]):
             self.work.state("d_agg")
         if self.column.ties.kind == "spiral":
             self.work.state("rho_s", "rho_s_min")
+        names = dict.fromkeys(str(force.combination) for force in self.factored)
+        if names:
+            self.work.pad.reason(f"Combinations considered, {len(names)}: {'; '.join(names)}.")
 
     @cached_property
     def interaction(self) -> Interaction:

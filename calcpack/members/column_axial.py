@@ -10,16 +10,18 @@ from calcpack.members.column_like import ForceLike
 from calcpack.members.column_rules import ColumnWorking
 from calcpack.members.results import CheckResult
 
-__all__ = ["axial_check"]
+__all__ = ["AXIAL_STEPS", "axial_check"]
 
 T = TypeVar("T")
 _AXIAL = "22.4.2"
+# In the order of a hand calculation, the maximum design axial strength last.
+AXIAL_STEPS = ("A_g", "A_st", "P_o", "P_n_max", "phi_P_n_max")
 _UNFACTORED = "Forces are listed by load, not factored: the axial force is not verified."
 
 
 def axial_check(work: ColumnWorking[T], forces: Sequence[ForceLike], values_of: ForceValues[T]) -> CheckResult:
     """The largest compression against the maximum design axial strength; without forces, the strengths alone."""
-    _, _, P_o, _, capacity = [work.value(symbol) for symbol in ("A_g", "A_st", "P_o", "P_n_max", "phi_P_n_max")]
+    _, _, P_o, _, capacity = [work.value(symbol) for symbol in AXIAL_STEPS]
     values = {"P_o": P_o, "phi_P_n_max": capacity}
     governing = max(forces, key=lambda force: force.P, default=None)
     if governing is None:

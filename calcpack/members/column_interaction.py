@@ -3,8 +3,10 @@
 from __future__ import annotations
 
 from collections.abc import Sequence
+from math import isnan
 from typing import TypeVar
 
+from calcpack.members.column_axial import AXIAL_STEPS
 from calcpack.members.column_bending import work_ray, work_strength, work_tension
 from calcpack.members.column_block import NeutralAxis, bending_axes
 from calcpack.members.column_charts import draw_charts, draw_section
@@ -25,6 +27,9 @@ _CONVENTIONS = (
     "M_uy that at +x. The ratio is taken on the ray from the origin through the load; phi follows the extreme tension "
     "bar, measured square to the neutral axis."
 )
+
+_NO_FORCES = "No factored forces listed for this column: the strengths alone are stated."
+_BUCKLED = "No magnifier exists in any combination, see stability: there is no load to hold against the section."
 
 
 def bending_check(
@@ -49,10 +54,12 @@ def bending_check(
     work.pad.heading("Axial force with bending")
     one = checked.governing
     if one is None:
-        work.pad.reason("No factored forces listed for this column: the strengths alone are stated.")
+        work.pad.reason(_BUCKLED if forces else _NO_FORCES)
         return result
     work.pad.reason(_CONVENTIONS)
-    work.pad.reason(_why(one.name, len(checked.points), len(forces)))
+    # A single moment stands at both ends, which are one load point.
+    points = {(point.force, point.P, point.Mx, point.My) for point in checked.points}
+    work.pad.reason(_why(one.name, len(points), len(forces)))
     force = forces[one.force]
     point = slender.magnified(force, story_of(work.column, force, stories)).points[one.place]
     _show(work, checked, point)
@@ -71,9 +78,10 @@ def _show(work: ColumnWorking[T], checked: Interaction, point: Point[T]) -> None
     P, Mx, My = (work.pad.number(value) for value in (point.P, point.Mx, point.My))
     if checked.capped:
         work.pad.reason("On this ray the maximum axial strength governs; no neutral axis is needed.")
-        work.verify(_WHAT, point.P, work.value("phi_P_n_max"), CLAUSE)
+        *_, capacity = [work.value(symbol) for symbol in AXIAL_STEPS]
+        work.verify(_WHAT, point.P, capacity, CLAUSE)
         work.pad.figure(lambda: draw_charts(checked))
-    elif Mx or My:
+    elif (Mx or My) and not isnan(checked.neutral_axis[0]):
         _show_neutral_axis(work, checked, point)
     elif P < 0:
         work_tension(work, point.P, _WHAT)

@@ -19,7 +19,7 @@ __all__ = ["NO_DENSITY", "Axis", "restraint", "stated_factor"]
 
 T = TypeVar("T")
 NO_DENSITY = "Density of the lightweight concrete not stated: E_c is taken at 90 lb/ft^3, the least of 19.2.2.1(a)."
-_ROOT = "root of the alignment-chart equation, to be confirmed by its two sides"
+_METHOD = "root of the equation of the alignment chart"
 
 
 @dataclass(frozen=True)
@@ -129,8 +129,9 @@ class Axis(Generic[T]):
         means = f"effective length factor, bending about {self.name}, {state}"
         if not any(ends):
             return pad.given("k", solve(*ends), means, "both ends fixed, the corner of the alignment chart")
-        k = pad.given("k", solve(*ends), means, _ROOT)
-        pad.work(equation, psi_A=psi_A, psi_B=psi_B, k=k)
+        clause = self.work.clause(equation)
+        k = pad.solved("k", solve(*ends), means, _METHOD, clause, [psi_A, psi_B])
+        pad.confirm([k], [pad.work(equation, psi_A=psi_A, psi_B=psi_B, k=k)])
         return k
 
     @cached_property

@@ -132,7 +132,9 @@ class Slenderness(Generic[T]):
 
 
 def _at_ends(P_u: T, x: tuple[T, T], y: tuple[T, T]) -> tuple[Point[T], ...]:
-    return tuple(Point(P_u, Mx, My) for Mx, My in zip(x, y, strict=True))
+    bottom, top = (Point(P_u, Mx, My) for Mx, My in zip(x, y, strict=True))
+    # A moment that the table gives once is the same value at both ends.
+    return (bottom,) if x[0] is x[1] and y[0] is y[1] else (bottom, top)
 
 
 def on_sheet(work: ColumnWorking[T], rule: Formula = stiffness.stiffness_gross) -> Slenderness[T]:

@@ -107,11 +107,10 @@ class Interaction:
 
 
 def section_of(column: ColumnLike) -> Section:
-    """The section of a column."""
+    """The section of a column; its bars as points, since bars that overlap are told by the check of their spacing."""
     from calcpack.mechanics import circle, rectangle
 
-    one = bar(column.bars.size)
-    bars = [(x, y, one.A_b) for x, y in bar_positions(column)]
+    bars = [(x, y, bar(column.bars.size).A_b) for x, y in bar_positions(column)]
     if column.b is None:
-        return circle(column.h, bars, f_c=column.f_c, f_y=column.f_y, d_b=one.d_b)
-    return rectangle(column.b, column.h, bars, f_c=column.f_c, f_y=column.f_y, d_b=one.d_b)
+        return circle(column.h, bars, f_c=column.f_c, f_y=column.f_y)
+    return rectangle(column.b, column.h, bars, f_c=column.f_c, f_y=column.f_y)

@@ -15,7 +15,7 @@ from calcpack.members.column_loads import combined
 from calcpack.members.results import CheckResult
 from calcpack.members.termination import KINDS
 
-__all__ = ["JobChecks", "check_members"]
+__all__ = ["JobChecks", "attempt", "check_members", "raise_noted", "rows_of"]
 
 
 @dataclass(frozen=True)
@@ -50,8 +50,8 @@ def check_members(job: Job) -> JobChecks:
     """
     code = edition(job.codes.concrete)
     errors: list[InputError] = []
-    columns, forces, terminations, stories = (_rows(errors, reader, job.root) for reader in _READERS)
-    _try(errors, lambda: job.givens)
+    columns, forces, terminations, stories = (rows_of(errors, reader, job.root) for reader in _READERS)
+    attempt(errors, lambda: job.givens)
     results: list[CheckResult] = []
     owed: list[tuple[str, str]] = []
     by_mark: dict[str, list[Any]] = {}
@@ -60,19 +60,17 @@ def check_members(job: Job) -> JobChecks:
     context = column.Context(code, stories, job.columns.stiffness)
     for row in columns:
         own = by_mark.get(row.mark, [])
-        factored = _try(errors, combined, row, own, job.codes.loads, job.combining)
+        factored = attempt(errors, combined, row, own, job.codes.loads, job.combining)
         if factored is not None:
-            results += _try(errors, column.check, row, factored, context) or []
+            results += attempt(errors, column.check, row, factored, context) or []
             owed += [(f"{row.mark}: {name}", row.file) for name in column.owed(row, own)]
     for termination in terminations:
-        found = _try(errors, anchorage.check, termination, code)
+        found = attempt(errors, anchorage.check, termination, code)
         results += [found] if found else []
     if not errors:
-        _try(errors, match, columns, forces)
-        _try(errors, match_stories, columns, stories)
-    if errors:
-        words = "the inputs cannot be read" if any(isinstance(error, TableError) for error in errors) else _NO_CHECK
-        raise errors[0] if len(errors) == 1 else type(errors[0]).gathered(words, errors)
+        attempt(errors, match, columns, forces)
+        attempt(errors, match_stories, columns, stories)
+    raise_noted(errors)
     files = [{row.mark: row.file for row in rows} for rows in (columns, terminations)]
     return JobChecks(tuple(results), tuple(owed), *files)
 
@@ -87,7 +85,14 @@ _NO_CHECK = "the schedules cannot be checked"
 _T = TypeVar("_T")
 
 
-def _rows(errors: list[InputError], reader: Callable[[Path], tuple[Any, ...]], root: Path) -> tuple[Any, ...]:
+def raise_noted(errors: Sequence[InputError]) -> None:
+    """Raise what was noted, all of it as one error; nothing where nothing was."""
+    if errors:
+        words = "the inputs cannot be read" if any(isinstance(error, TableError) for error in errors) else _NO_CHECK
+        raise errors[0] if len(errors) == 1 else type(errors[0]).gathered(words, errors)
+
+
+def rows_of(errors: list[InputError], reader: Callable[[Path], tuple[Any, ...]], root: Path) -> tuple[Any, ...]:
     """The rows of a table; where some cannot be read, that is noted and the others are still checked."""
     try:
         return reader(root)
@@ -96,7 +101,7 @@ def _rows(errors: list[InputError], reader: Callable[[Path], tuple[Any, ...]], r
         return error.records
 
 
-def _try(errors: list[InputError], step: Callable[..., _T], *arguments: Any) -> _T | None:
+def attempt(errors: list[InputError], step: Callable[..., _T], *arguments: Any) -> _T | None:
     """Take a step, or note why it cannot be taken, so that what is wrong is told all at once."""
     try:
         return step(*arguments)

@@ -84,7 +84,7 @@ class RecordingPad:
     def work(self, formula: Formula, **values: float) -> float:
         recording = formula.record(**values)
         for recorded in recording.lines:
-            assert isinstance(recorded.value, float)
+            assert isinstance(recorded.value, float | int)
             self.steps.append(("worked", recorded.line.target))
             self.values[recorded.line.target] = recorded.value
         self.clauses.append((recording.lines[-1].line.target, formula))
@@ -140,6 +140,12 @@ class RecordingPad:
     def told(self, kind: str) -> list[str]:
         """The steps of one kind, in order."""
         return [text for step, text in self.steps if step == kind]
+
+    def under(self, heading: str) -> list[tuple[str, str]]:
+        """The steps from a heading to the next one."""
+        start = self.steps.index(("heading", heading)) + 1
+        ends = [place for place, (kind, _) in enumerate(self.steps) if kind == "heading" and place >= start]
+        return self.steps[start : ends[0] if ends else None]
 
     @property
     def reasons(self) -> list[str]:

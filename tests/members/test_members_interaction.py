@@ -3,36 +3,37 @@
 from __future__ import annotations
 
 import math
-from dataclasses import dataclass, replace
+from collections.abc import Sequence
+from dataclasses import replace
 
 import pytest
 
 from calcpack.aci318.editions import Edition
-from calcpack.members.column import axial_capacity
+from calcpack.errors import RangeError
+from calcpack.members.bar_layout import bar_positions, bar_rows, layer_rows
+from calcpack.members.column import Context, check
+from calcpack.members.column_rules import ColumnWorking
 from calcpack.members.column_section import Bars, Column, Force, Ties
-from calcpack.members.interaction import axial_and_bending, bar_positions, load_points
+from calcpack.members.interaction import Interaction, LoadPoint
 from calcpack.members.pad import FloatPad
+from calcpack.members.results import CheckResult
+from calcpack.tabulation import Column as Printed
+from calcpack.tabulation import Tabulation
 
 FT = 12_000.0  # kip*ft in lb*in
 SQUARE = Column("C1", 16.0, 16.0, Bars(8, 9, 3, 3), Ties("ties", 3, 14.0), 1.5, 4_000.0, 60_000.0)
 ROUND = Column("C2", None, 20.0, Bars(8, 8), Ties("spiral", 4, 2.5), 1.5, 5_000.0, 60_000.0)
 
 
-@dataclass(frozen=True)
-class Ended:
-    """Forces with moments by their ends, as forces.csv may give them."""
+# Forces with moments by their ends, as forces.csv may give them.
+ENDED = Force("1.2D+1.6L", 100_000.0, Mx=None, Mx_bottom=10.0 * FT, Mx_top=-40.0 * FT)
 
-    combination: str | None = "1.2D+1.6L"
-    P: float = 100_000.0
-    Mx: float | None = None
-    My: float | None = 0.0
-    Mx_bottom: float | None = 10.0 * FT
-    Mx_top: float | None = -40.0 * FT
-    My_bottom: float | None = None
-    My_top: float | None = None
-    Vx: float = 0.0
-    Vy: float = 0.0
-    T: float = 0.0
+
+def axial_and_bending(column: Column, forces: Sequence[Force], edition: Edition) -> CheckResult:
+    """The check in bulk that stands first among those of a column."""
+    result = check(column, forces, Context(edition))[0]
+    assert (result.check, result.clause) == ("axial and bending", "22.4")
+    return result
 
 
 def test_bars_of_a_rectangle_stand_evenly_along_its_faces() -> None:
@@ -58,15 +59,65 @@ def test_the_first_bar_of_a_circle_is_on_the_x_axis() -> None:
     assert all(math.hypot(*place) == pytest.approx(7.5) for place in places)
 
 
-def test_moments_by_their_ends_make_two_load_points() -> None:
-    assert list(load_points([Ended()])) == [
-        ("1.2D+1.6L", 100_000.0, 10.0 * FT, 0.0),
-        ("1.2D+1.6L", 100_000.0, -40.0 * FT, 0.0),
+@pytest.mark.parametrize(
+    ("count", "layout"), [(8, (3, 3)), (4, (2, 2)), (10, (5, 2)), (10, (2, 5)), (14, (5, 4)), (11, None), (3, None)]
+)
+def test_rows_of_a_table_of_bars_stand_where_the_bars_do(
+    count: int, layout: tuple[int, int] | None, each: Edition
+) -> None:
+    column = (
+        replace(SQUARE, h=24.0, bars=Bars(count, 9, *layout)) if layout else replace(ROUND, bars=Bars(count, 8))
+    )
+    table = Tabulation("Bars", "bar", (), (Printed("x", 4), Printed("y", 4)))
+    made = FloatPad().tabulate(table, bar_rows(ColumnWorking(FloatPad(), column, each)), {})
+    assert [(values["x"], values["y"]) for values in made.rows] == [
+        pytest.approx(place, abs=1e-12) for place in bar_positions(column)
     ]
 
 
-def test_unfactored_rows_are_no_load_points() -> None:
-    assert list(load_points([replace(Ended(), combination=None)])) == []
+@pytest.mark.parametrize(("axis", "across"), [("x", "y"), ("y", "x")])
+def test_layers_hold_every_bar_once(axis: str, across: str, each: Edition) -> None:
+    column = replace(SQUARE, h=24.0, bars=Bars(14, 9, 5, 4))
+    table = Tabulation("Layers", "layer", (), (Printed(across, 4), Printed("A_b", 2)))
+    made = FloatPad().tabulate(table, layer_rows(ColumnWorking(FloatPad(), column, each), axis), {})
+    # By hand: along y four layers of 5, 2, 2 and 5 bars; along x five of 4, 2, 2, 2 and 4.
+    assert [values["A_b"] for values in made.rows] == (
+        [5.0, 2.0, 2.0, 5.0] if axis == "x" else [4.0, 2.0, 2.0, 2.0, 4.0]
+    )
+    places = sorted({round(x if axis == "y" else y, 9) for x, y in bar_positions(column)})
+    assert [values[across] for values in made.rows] == pytest.approx(places)
+
+
+def test_moments_by_their_ends_make_two_load_points(each: Edition) -> None:
+    # The larger end governs, with its sign; it is the ratio of that moment alone.
+    result = axial_and_bending(SQUARE, [ENDED], each)
+    assert result.values["M_ux"] == (-40.0, "kip*ft")
+    assert result.ratio == axial_and_bending(SQUARE, [Force("top", 100_000.0, -40.0 * FT)], each).ratio
+    turned = replace(ENDED, Mx_bottom=-40.0 * FT, Mx_top=10.0 * FT)
+    assert axial_and_bending(SQUARE, [turned], each) == result
+
+
+def test_unfactored_rows_are_no_load_points(each: Edition) -> None:
+    result = axial_and_bending(SQUARE, [replace(ENDED, combination=None)], each)
+    assert (result.ratio, result.verdict) == (None, "")
+
+
+def test_a_load_that_is_no_number_is_refused(each: Edition) -> None:
+    with pytest.raises(RangeError, match="nan"):
+        axial_and_bending(SQUARE, [Force("a", 1_000.0, float("nan"))], each)
+
+
+def test_the_governing_point_is_known_with_its_force_and_place(each: Edition) -> None:
+    points = [
+        LoadPoint(number, place, f"c{number}", 1e5, share * 1e5, 0.0)
+        for number, place, share in ((0, 0, 1.0), (0, 1, 3.0), (1, 0, 9.0), (1, 1, 5.0), (2, 0, 8.0))
+    ]
+    found = Interaction(SQUARE, each, points)
+    assert found.governing == points[2]
+    assert found.result().combination == "c1"
+    assert found.ratio == max(float(ratio) for ratio in found.checked.ratio)
+    assert not found.capped
+    assert Interaction(SQUARE, each, [LoadPoint(0, 0, "a", 1e5, 1e3, 0.0)]).capped
 
 
 def test_compression_alone_is_held_against_the_maximum_axial_strength(each: Edition) -> None:
@@ -80,10 +131,10 @@ def test_compression_alone_is_held_against_the_maximum_axial_strength(each: Edit
 
 @pytest.mark.parametrize("column", [SQUARE, ROUND])
 def test_axial_strengths_are_those_of_the_printed_equations(column: Column, each: Edition) -> None:
-    result = axial_and_bending(column, [Force("a", 1_000.0)], each)
-    P_o, capacity = axial_capacity(FloatPad(), column, each)
-    assert result.values["P_o"][0] == pytest.approx(P_o / 1000)
-    assert result.values["phi_P_n_max"][0] == pytest.approx(capacity / 1000)
+    bending, axial, *_ = check(column, [Force("a", 1_000.0)], Context(each))
+    assert axial.check == "axial strength"
+    for symbol in ("P_o", "phi_P_n_max"):
+        assert bending.values[symbol] == (pytest.approx(axial.values[symbol][0]), "kip")
 
 
 def test_tension_alone_is_held_against_the_bars(each: Edition) -> None:

@@ -87,7 +87,7 @@ def test_a_column_on_a_sheet_comes_to_the_verdicts_of_the_bulk(mark: str, sheet:
     sheet.column(mark)
     (row,) = [one for one in read_columns(sheet._root) if one.mark == mark]
     forces = [force for force in read_forces(sheet._root) if force.mark == mark]
-    results = column.check(row, forces, sheet.code)
+    results = column.check(row, forces, column.Context(sheet.code))
     shown = verdicts(sheet)
     assert ("NG" in {entry.verdict for entry in shown}) is ("NG" in {result.verdict for result in results})
     ratios = [entry.ratio for entry in shown]
@@ -133,7 +133,7 @@ def test_sources_of_a_sheet_name_drawing_and_row(sheet: Sheet) -> None:
     (f_c,), (P_u,) = sheet.values("f_c"), sheet.values("P_u")
     assert f_c.entry.source == "S-401, rev 2 (inputs/columns.csv, row 2)"
     assert P_u.entry.source == "inputs/forces.csv, row 3"
-    assert P_u.entry.means == "factored axial force, 1.2D+1.6L, compression positive"
+    assert P_u.entry.means == "factored axial force, compression positive, 1.2D+1.6L"
 
 
 def test_a_termination_gives_the_length_it_requires(sheet: Sheet) -> None:

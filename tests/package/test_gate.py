@@ -109,6 +109,38 @@ def test_an_output_that_is_not_printed_is_named_by_its_cell_and_does_not_block(j
     assert "not printed" in found[1].what
 
 
+def solved(confirmed_by: tuple[str, ...] = ()) -> tuple[Entry, Entry]:
+    """A neutral axis, and a difference that is worked from it."""
+    found = Entry(
+        "C-01/c", "solved", "c", "depth of the neutral axis", 8.1234, "in", "8.123400 in", "C-01", clause="22.2.1",
+        method="equilibrium by Newton's method", solved_from=("C-01/a",), confirmed_by=confirmed_by,
+    )  # fmt: skip
+    left = Entry(
+        "C-01/Delta", "worked", "Delta", "difference", 0.0, "", "0.0000", "C-01", clause="22.4", expression="c - c",
+        where={"c": "C-01/c"},
+    )  # fmt: skip
+    return found, left
+
+
+def test_a_solved_value_that_nothing_confirms_is_open(job: Any) -> None:
+    found = open_items(job, content(*solved()), NOTHING)
+    assert texts(found)[1:] == [
+        ("output", "C-01/c = 8.123400 in, found by iteration, is not confirmed", "C-01", True)
+    ]  # fmt: skip
+
+
+def test_a_solved_value_that_is_confirmed_is_not(job: Any) -> None:
+    assert len(open_items(job, content(*solved(("C-01/Delta",))), NOTHING)) == 1
+
+
+def test_an_unconfirmed_value_blocks_a_final_issue(job: Any) -> None:
+    items = open_items(job, content(*solved()), NOTHING)[1:]
+    assert _status(with_purpose(job, "Construction"), items) == 1
+    assert _status(with_purpose(job, "Plan review"), items) == 0
+    with pytest.raises(RefusedError, match=r"output: C-01/c = 8\.123400 in, found by iteration, is not confirmed"):
+        _gated(with_purpose(job, "Construction"), tuple(items))
+
+
 def with_purpose(job: Any, purpose: str) -> Any:
     root = job.root
     (root / "job.toml").write_text(JOB.replace("Plan review", purpose), "utf-8")

@@ -5,7 +5,7 @@ from __future__ import annotations
 from pathlib import Path
 
 import pytest
-from job_samples import ANCHORAGE, make_job
+from job_samples import ANCHORAGE, JOB, make_job
 
 from calcpack.errors import InputError, RangeError, TableError
 from calcpack.job import load
@@ -35,9 +35,80 @@ def test_members_in_the_order_of_their_tables(tmp_path: Path) -> None:
 
 
 def test_what_a_member_owes_names_it(tmp_path: Path) -> None:
-    owed = check_members(load(job(tmp_path))).owed
-    assert any(text.startswith("C2: ") for text, _ in owed)  # its bending is not covered
-    assert not any(text.startswith("C1: ") and "bending" in text for text, _ in owed)
+    twisted = """mark,combination,P [kip],Mx [kip*ft],My [kip*ft],T [kip*ft]
+C1,1: 1.4D,260,0,0,0
+C2,1: 1.4D,78,40,0,3
+"""
+    assert check_members(load(job(tmp_path, forces=twisted))).owed == (("C2: torsion", "inputs/columns.csv"),)
+
+
+def test_bending_is_no_open_item(tmp_path: Path) -> None:
+    checks = check_members(load(job(tmp_path)))
+    assert checks.owed == ()
+    ratios = {one.mark: one.ratio for one in checks.results if one.check == "axial and bending"}
+    axial = {one.mark: one.ratio for one in checks.results if one.check == "axial strength"}
+    assert ratios["C1"] == axial["C1"]
+    assert (ratios["C2"] or 0.0) > (axial["C2"] or 0.0)
+
+
+def test_unfactored_forces_are_combined_before_they_are_checked(tmp_path: Path) -> None:
+    by_load = """mark,load,P [kip],Mx [kip*ft],My [kip*ft]
+C1,D,100,0,0
+C1,L,60,0,0
+C2,D,50,20,0
+C2,W,-60,30,0
+"""
+    checks = check_members(load(job(tmp_path, forces=by_load)))
+    found = {(one.mark, one.check): one for one in checks.results}
+    # ASCE 7-16 2.3.1, hand: 1.2 * 100 + 1.6 * 60 = 216 kip; 0.9 * 50 - 60 = -15 kip with 0.9 * 20 + 30 = 48 kip*ft.
+    assert found["C1", "axial strength"].values["P_u"] == (pytest.approx(216.0), "kip")
+    bending = found["C2", "axial and bending"]
+    assert bending.values["P_u"] == (pytest.approx(-15.0), "kip")
+    assert bending.values["M_ux"] == (pytest.approx(48.0), "kip*ft")
+    assert checks.owed == ()
+
+
+def test_what_cannot_be_combined_is_told_with_its_column(tmp_path: Path) -> None:
+    by_load = "mark,load,P [kip],Mx [kip*ft],My [kip*ft]\nC1,L,60,0,0\nC2,D,50,20,0\n"
+    with pytest.raises(TableError, match=r"column C1: unfactored forces\n +rows of L without D"):
+        check_members(load(job(tmp_path, forces=by_load)))
+
+
+SLENDER = COLUMNS.replace("f_y [psi]", "f_y [psi],l_u [ft],frame,story,k_x,k_y").replace(
+    "60000", "60000,14,sway,2,1.4,1.4"
+)
+STORIES = """story,sum_P_u [kip],V_us [kip],Delta_o [in],l_c [ft],sum_P_c [kip]
+2,900,40,0.4,14,9000
+"""
+
+
+def test_a_sway_column_takes_its_story(tmp_path: Path) -> None:
+    checks = check_members(load(job(tmp_path, columns=SLENDER, stories=STORIES)))
+    assert [one.check for one in checks.results if one.mark == "C2"][:3] == [
+        "axial and bending", "stability", "second-order moment",
+    ]  # fmt: skip
+
+
+def test_a_story_that_is_not_listed(tmp_path: Path) -> None:
+    with pytest.raises(InputError, match=r"stor"):
+        check_members(load(job(tmp_path, columns=SLENDER, stories=STORIES.replace("2,900", "3,900"))))
+
+
+def test_the_stiffness_of_slender_columns_is_a_setting_of_the_job(tmp_path: Path) -> None:
+    columns = SLENDER.replace("sway,2,1.4,1.4", "nonsway,,,")
+
+    def stability(name: str, toml: str) -> list[float | None]:
+        root = make_job(tmp_path / name, columns=columns, forces=FORCES, toml=JOB + toml)
+        return [one.ratio for one in check_members(load(root)).results if one.check == "stability"]
+
+    usual, by_gross, by_bars = (
+        stability("usual", ""),
+        stability("gross", '[columns]\nstiffness = "a"\n'),
+        stability("bars", '[columns]\nstiffness = "b"\n'),
+    )
+    assert len(usual) == 2
+    assert usual == by_gross
+    assert all(one != other for one, other in zip(by_gross, by_bars, strict=True))
 
 
 def test_failed_checks(tmp_path: Path) -> None:
