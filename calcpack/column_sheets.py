@@ -21,7 +21,6 @@ if TYPE_CHECKING:
 
 __all__ = ["ColumnSheets"]
 
-_SHEARS = ("shear, x", "shear, y")
 _SHEAR_DETAILS = ("minimum shear reinforcement", "spacing of shear reinforcement")
 # Limit states of the summary, and the checks that count in each.
 _LIMIT_STATES: Mapping[str, tuple[str, ...]] = {
@@ -32,12 +31,6 @@ _LIMIT_STATES: Mapping[str, tuple[str, ...]] = {
     "ties": ("tie size", "tie spacing", "lateral support of bars", "spiral size", "spiral pitch", "spiral ratio"),
     "shear": ("shear", "section in shear", "biaxial shear", *_SHEAR_DETAILS),
 }
-
-
-# Rules of detailing are often met to the letter: a ratio of 1.0 there says nothing of how much the column carries.
-_STRENGTH = frozenset(
-    ("axial and bending", "stability", "second-order moment", "axial strength", "biaxial shear", "shear", *_SHEARS)
-)
 
 
 @dataclass(frozen=True)
@@ -51,8 +44,13 @@ class _Done:
 
     @property
     def governing(self) -> CheckResult:
-        """The largest ratio of a limit state of strength; a check that is not OK before any other."""
-        return max(self.results, key=lambda one: (one.verdict == "NG", one.check in _STRENGTH, one.ratio or 0.0))
+        """The largest ratio of a limit state of strength; a check that is not OK before any other.
+
+        Rules of detailing are often met to the letter: a ratio of 1.0 there does not say how much a column carries.
+        """
+        from calcpack.members.arrangements import STRENGTH
+
+        return max(self.results, key=lambda one: (one.verdict == "NG", one.check in STRENGTH, one.ratio or 0.0))
 
     def shown(self, result: CheckResult | None) -> str | Value:
         """The ratio of a check, linked to the verdict it stands in."""

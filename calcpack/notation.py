@@ -144,6 +144,10 @@ ROWS: tuple[tuple[str, str, Dimension, str, str], ...] = (
     ("l_sc_a", r"\ell_{sc,a}", LENGTH, "compression lap by the table, before column reductions", "positive"),
     ("l_ext", r"\ell_{ext}", LENGTH, "straight extension at the end of a standard hook", "positive"),
     ("l_available", r"\ell_{available}", LENGTH, "length the detail offers", "positive"),
+    # Rounding of the development and lap schedule
+    ("l_required", r"\ell_{required}", LENGTH, "length required, minima included", "positive"),
+    ("l_increment", r"\ell_{increment}", LENGTH, "increment to which lengths are rounded up", "positive"),
+    ("l_round", r"\ell_{round}", LENGTH, "length required, rounded up to the increment", "positive"),
     ("D_bend", r"D_{bend}", LENGTH, "least inside diameter of bend", "positive"),
     ("K_tr", "K_{tr}", LENGTH, "transverse reinforcement index", "nonnegative"),
     ("K_tr_min", "K_{tr,min}", LENGTH, "least transverse reinforcement index", "positive"),

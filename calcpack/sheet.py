@@ -17,6 +17,7 @@ from calcpack.column_sheets import ColumnSheets
 from calcpack.errors import InputError, Problem, SheetError
 from calcpack.formula import Clause, Formula
 from calcpack.ledger import Entry, passes
+from calcpack.length_sheets import LengthSheets
 from calcpack.tabulating import Tabulating
 from calcpack.typeset.line import Origin, printed_lines, with_unit
 from calcpack.typeset.store import LayoutStore
@@ -33,7 +34,7 @@ _STATUS = ("confirmed", "assumed")
 
 
 @dataclass
-class Sheet(ColumnSheets, Tabulating):
+class Sheet(ColumnSheets, LengthSheets, Tabulating):
     """A calculation sheet, one for each notebook.
 
     Parameters

@@ -32,7 +32,7 @@ LAYERS: list[set[str]] = [
     {"validation"},
     {"solving", "tabulating"},
     {"scheduled"},
-    {"column_sheets"},
+    {"column_sheets", "length_sheets"},
     {"sheet"},
     {"package"},
     {"cli"},

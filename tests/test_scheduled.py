@@ -107,9 +107,9 @@ def test_a_column_of_unfactored_forces_is_combined(sheet: Sheet, root: Path, sho
     (axial,) = [entry for entry in sheet.ledger if entry.means.startswith("C1: axial force within")]
     demand = sheet.ledger[axial.demand]
     assert demand.value == pytest.approx(216_000.0)
-    assert demand.expression == "1.2*P_D + 1.6*P_L"
+    assert demand.expression == "1.2 * P_D + 1.6 * P_L"
     results = [one for one in check_members(load(root)).results if one.mark == "C1"]
-    assert axial.ratio == [one.ratio for one in results if one.check == "axial strength"][0]
+    assert axial.ratio == next(one.ratio for one in results if one.check == "axial strength")
     assert any("Combinations considered" in item["parts"][0]["text"] for item in shown.of("note"))
     agree(sheet)
 

@@ -254,7 +254,7 @@ def concrete_ratio_19(
     """Shear strength of concrete with at least the minimum shear reinforcement, (b)."""
     root_f_c = min(sqrt(f_c), 100)
     axial_stress = min(N_u / (6 * A_g), 0.05 * f_c)
-    V_c_a = (8 * lamb * rho_w ** (1 / 3) * root_f_c + axial_stress) * b_w * d
+    V_c_a: Force = (8 * lamb * rho_w ** (1 / 3) * root_f_c + axial_stress) * b_w * d
     V_c_max = 5 * lamb * root_f_c * b_w * d
     V_c = max(min(V_c_a, V_c_max), 0.0)
     return V_c
@@ -267,7 +267,7 @@ def concrete_few_ties_19(
     """Shear strength of concrete with less than the minimum shear reinforcement, (c)."""
     root_f_c = min(sqrt(f_c), 100)
     axial_stress = min(N_u / (6 * A_g), 0.05 * f_c)
-    V_c_a = (8 * lambda_s * lamb * rho_w ** (1 / 3) * root_f_c + axial_stress) * b_w * d
+    V_c_a: Force = (8 * lambda_s * lamb * rho_w ** (1 / 3) * root_f_c + axial_stress) * b_w * d
     V_c_max = 5 * lamb * root_f_c * b_w * d
     V_c = max(min(V_c_a, V_c_max), 0.0)
     return V_c

@@ -13,6 +13,7 @@ from pathlib import Path
 
 from calcpack.errors import Problem, TableError
 from calcpack.job.givens import GivenValue, read_givens
+from calcpack.job.length_settings import LengthSettings, length_settings
 from calcpack.job.settings import AS_USUAL, ColumnSettings, column_settings, load_settings
 from calcpack.job.toml import Place, TomlFile
 from calcpack.loads.combinations import AS_CODE, Settings
@@ -93,6 +94,7 @@ class Job:
     combining : settings of the load combinations
     live_basis : why a companion live load is reduced, where it is
     columns : settings of the column sheets
+    lengths : settings of the development and lap schedule
     """
 
     root: Path
@@ -112,6 +114,7 @@ class Job:
     combining: Settings = AS_CODE
     live_basis: str = ""
     columns: ColumnSettings = AS_USUAL
+    lengths: LengthSettings = LengthSettings()
 
     @cached_property
     def givens(self) -> tuple[GivenValue, ...]:
@@ -167,13 +170,13 @@ def load(path: Path) -> Job:
         raise _no_job(path, "there is none")
     file = TomlFile(path / _FILE, _FILE)
     top = file.top
-    top.only("job", "codes", "units", "loads", "columns", "people", "revision", "basis", "limit", "deferred")
-    texts = _job(top.table("job"))
+    top.only("job", "codes", "units", "loads", "columns", "lengths", "people", "revision", "basis", "limit", "deferred")
+    texts, codes = _job(top.table("job")), _codes(top.table("codes"))
     loads = top.table("loads", required=False)
     job = Job(
         path,
         **texts,
-        codes=_codes(top.table("codes")),
+        codes=codes,
         system=_system(top.table("units")),
         people=_people(top.table("people", required=False)),
         revisions=_revisions(top),
@@ -183,6 +186,7 @@ def load(path: Path) -> Job:
         combining=load_settings(loads),
         live_basis=loads.text("live_companion_basis", required=False),
         columns=column_settings(top.table("columns", required=False)),
+        lengths=length_settings(top.table("lengths", required=False), codes.concrete),
     )
     file.finish()
     return job

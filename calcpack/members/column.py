@@ -26,7 +26,7 @@ from calcpack.members.column_slender_frame import story_of
 from calcpack.members.column_slenderness import Slenderness, slenderness_checks
 from calcpack.members.column_special import special_checks, special_owed
 from calcpack.members.column_ties import transverse_checks
-from calcpack.members.interaction import Interaction, LoadPoint
+from calcpack.members.interaction import Interaction, LoadPoint, end_points
 from calcpack.members.pad import FloatPad, Pad
 from calcpack.members.results import CheckResult
 
@@ -116,6 +116,8 @@ class _Checks(Generic[T]):
     @cached_property
     def interaction(self) -> Interaction:
         """Every load point of every combination against the design surface; second-order effects included."""
+        if self.column.l_u is None:
+            return Interaction(self.column, self.context.edition, list(end_points(self.factored)))
         bulk = Slenderness(
             ColumnWorking(_FLOATS, self.column, self.context.edition), _STIFFNESS[self.context.stiffness]
         )

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Sequence
+from collections.abc import Iterable, Iterator, Sequence
 from dataclasses import dataclass
 from functools import cached_property
 from typing import TYPE_CHECKING
@@ -12,18 +12,18 @@ from calcpack.aci318.bars import bar
 from calcpack.aci318.editions import Edition
 from calcpack.aci318.standards import ACI_318_14
 from calcpack.members.bar_layout import bar_positions
-from calcpack.members.column_like import ColumnLike
+from calcpack.members.column_like import ColumnLike, ForceLike
 from calcpack.members.results import CheckResult, measured, verdict_of
 
 if TYPE_CHECKING:
     from calcpack.mechanics import Checked, Section, Surface
 
-__all__ = ["CHECK", "CLAUSE", "Interaction", "LoadPoint", "section_of"]
+__all__ = ["CHECK", "CLAUSE", "Interaction", "LoadPoint", "end_points", "section_of"]
 
 CHECK, CLAUSE = "axial and bending", "22.4"
 
 
-@dataclass(frozen=True)
+@dataclass(frozen=True, slots=True)
 class LoadPoint:
     """A load on the section, lb and lb*in.
 
@@ -40,6 +40,19 @@ class LoadPoint:
     P: float
     Mx: float
     My: float
+
+
+def end_points(forces: Iterable[ForceLike]) -> Iterator[LoadPoint]:
+    """The load points of a column whose section alone is checked: both ends, or one where moments are given once."""
+    for number, force in enumerate(forces):
+        name = force.combination or ""
+        if force.Mx is not None and force.My is not None:
+            yield LoadPoint(number, 0, name, force.P, force.Mx, force.My)
+            continue
+        x = (force.Mx_bottom or 0.0, force.Mx_top or 0.0) if force.Mx is None else (force.Mx, force.Mx)
+        y = (force.My_bottom or 0.0, force.My_top or 0.0) if force.My is None else (force.My, force.My)
+        for place in (0, 1):
+            yield LoadPoint(number, place, name, force.P, x[place], y[place])
 
 
 @dataclass(frozen=True)

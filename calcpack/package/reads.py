@@ -10,6 +10,7 @@ from pathlib import Path
 from typing import Any
 
 from calcpack.job import Job, row_digest
+from calcpack.job.length_settings import lengths_of
 from calcpack.job.schedules import read_columns, read_forces, read_stories, read_terminations
 
 __all__ = ["Inputs", "file_digest"]
@@ -32,6 +33,8 @@ class Inputs:
     def digest(self, key: str) -> str:
         """The digest of what `key` names: ``job codes``, ``job settings``, ``givens q``, ``anchorage T1``, ``forces C1``."""
         kind, _, name = key.partition(" ")
+        if (kind, name) == ("job", "lengths"):
+            return repr(lengths_of(self.job))
         if kind == "job":
             return repr({"codes": self.job.codes, "settings": (self.job.combining, self.job.columns)}[name])
         if kind == "givens":

@@ -1,4 +1,4 @@
-"""Arrangements of bars: the list of the search against one of every candidate, facts by hand, and what the notes say."""
+"""Arrangements of bars: the search against every candidate, facts by hand, and what the notes say."""
 
 from __future__ import annotations
 
@@ -19,7 +19,7 @@ from calcpack.members.column_section import Bars, Column, Force, Ties
 
 ALL = 10_000
 TIED = Column("C1", 16.0, 16.0, Bars(8, 9, 3, 3), Ties("ties", 3, 12.0), 1.5, 4_000.0, 60_000.0)
-SMALL = Column("C2", 11.0, 11.0, Bars(4, 8, 2, 2), Ties("ties", 3, 9.0), 1.5, 5_000.0, 60_000.0, aggregate=0.75)
+SMALL = Column("C2", 11.0, 11.0, Bars(4, 8, 2, 2), Ties("ties", 3, 4.0), 1.5, 5_000.0, 60_000.0, aggregate=0.75)
 ROUND = Column("C3", None, 15.0, Bars(6, 8), Ties("spiral", 3, 2.0), 1.5, 4_000.0, 60_000.0, f_yt=60_000.0)
 LIGHT = [Force("1.2D+1.6L", 50_000.0)]
 BENT = [
@@ -28,6 +28,12 @@ BENT = [
     Force("1.2D+1.0W", 120_000.0, 380_000.0, 60_000.0, Vx=6_000.0, Vy=3_000.0),
     Force("0.9D+1.0W", 20_000.0, -300_000.0, 200_000.0, Vx=-6_000.0),
 ]
+
+
+def scaled(share: float) -> list[Force]:
+    return [
+        replace(force, P=share * force.P, Mx=share * (force.Mx or 0.0), My=share * (force.My or 0.0)) for force in BENT
+    ]
 
 
 def one_by_one(column: Column, forces: Sequence[Any], context: Context, around: range) -> Iterator[Arrangement]:
@@ -73,18 +79,20 @@ def refused(found: Arrangements) -> int:
 
 # Against every candidate. The widest range is chosen so that one bar more than it has would not fit.
 
-SLENDER = replace(SMALL, b=10.0, h=13.0, l_u=150.0, frame="nonsway", legs_y=3)
-SPECIAL = replace(SMALL, b=12.0, h=12.0, ties=Ties("ties", 4, 3.0), f_yt=60_000.0, seismic="special", legs_x=3)
+SLENDER = replace(SMALL, b=10.0, h=14.0, l_u=130.0, frame="nonsway", legs_y=3)
+SPECIAL = replace(
+    SMALL, b=12.0, h=12.0, ties=Ties("ties", 5, 2.5), f_yt=100_000.0, seismic="special", legs_x=3, legs_y=3
+)
 HOOPED = replace(ROUND, h=13.0, ties=Ties("ties", 3, 10.0), aggregate=1.25)
 
 
 @pytest.mark.parametrize(
     ("column", "forces", "stiffness", "around"),
     [
-        (SMALL, BENT, "a", range(2, 5)),
-        (SLENDER, BENT, "b", range(2, 6)),
-        (SPECIAL, BENT[1:], "a", range(2, 5)),
-        (ROUND, [replace(force, Mx=2.5 * (force.Mx or 0.0)) for force in BENT], "a", range(3, 17)),
+        (SMALL, scaled(1.6), "a", range(2, 5)),
+        (SLENDER, scaled(0.7), "b", range(2, 6)),
+        (SPECIAL, scaled(2.2), "a", range(2, 5)),
+        (ROUND, scaled(2.9), "a", range(3, 17)),
         (HOOPED, BENT[:3], "a", range(3, 12)),
     ],
     ids=["square", "slender, stiffness by bars", "special moment frame", "spiral", "circular ties"],
@@ -142,15 +150,15 @@ def test_the_spacing_of_ties_rules_out_thin_bars(spacing: float, first: str, eac
     assert first in texts(found)
 
 
-@pytest.mark.parametrize(("share", "first"), [(1.0, "6-#9"), (1.0 + 1e-6, "4-#11")])
+@pytest.mark.parametrize(("share", "first"), [(1.0, "6-#9"), (1.0 + 1e-6, "14-#6")])
 def test_the_load_that_the_bars_just_carry(share: float, first: str, each: Edition) -> None:
     # From memory, ACI 318 22.4.2: 0.65 * 0.80 * (0.85 * 4 * (256 - 6.00) + 60 * 6.00) = 629.2 kip with 6.00 in^2, by
-    # 6-#9 and by 10-#7. The next ones up are 4-#11 and 8-#8, 6.24 and 6.32 in^2.
+    # 6-#9 and by 10-#7. The next one up is 14-#6 with 6.16 in^2.
     column = replace(TIED, ties=Ties("ties", 4, 12.0))
     found = arrangements(column, [Force("1.4D", share * 629_200.0)], Context(each), 1).found[0]
     assert found.bars.split(" ")[0] == first
     assert found.governing in ("axial and bending", "axial strength")
-    assert found.ratio == found.bending == pytest.approx(1.0 if first == "6-#9" else 0.989, abs=1e-3)
+    assert found.ratio == found.bending == pytest.approx(1.0 if first == "6-#9" else 629.2 / 633.9, abs=1e-4)
 
 
 def test_of_equal_area_fewer_bars_come_first(each: Edition) -> None:
@@ -180,23 +188,33 @@ def test_the_fewest_bars_on_a_circle(column: Column, fewest: int, each: Edition)
     assert found[0].bars == f"{found[0].count}-#{found[0].size}"
 
 
-@pytest.mark.parametrize(("diameter", "most"), [(12.0, 7), (12.0 + 1e-3, 8)])
-def test_as_many_as_fit_on_a_circle(diameter: float, most: int, e19: Edition) -> None:
-    # 8 bars #8 on a circle of 12 - 2*1.875 - 1 = 7.25 in are 7.25 sin(pi/8) - 1 = 1.774 in apart, and #8 ask for 1.5;
-    # 9 of them have 1.480 in. #10 ask for 1.905 in: 6 bars on 6.98 in have 2.220 in, 7 have 1.759 in.
-    del most
-    found = arrangements(replace(ROUND, h=diameter), LIGHT, Context(e19), ALL).found
-    largest = {size: max((one.count for one in found if one.size == size), default=0) for size in SIZES}
-    assert (largest[8], largest[10]) == (8, 6)
+def test_as_many_as_fit_on_a_circle(e19: Edition) -> None:
+    # On a circle of 12 - 2*1.875 - 1 = 7.25 in, 8 bars #8 are 7.25 sin(pi/8) - 1 = 1.774 in apart, 9 of them 1.480 in,
+    # and 1.5 in are asked for. #10 ask for 1.905 in: on 6.98 in, 6 bars have 2.220 in, 7 have 1.759 in.
+    found = arrangements(replace(ROUND, h=12.0), LIGHT, Context(e19), ALL).found
+    assert [max(one.count for one in found if one.size == size) for size in (8, 10)] == [8, 6]
+
+
+@pytest.mark.parametrize(("side", "most"), [(12.25, 4), (12.249, 3)])
+def test_as_many_as_fit_along_a_face(side: float, most: int, each: Edition) -> None:
+    # Four #8 take 4*1.0 + 3*1.5 in, and cover and ties 2*1.875 in: 12.25 in.
+    found = arrangements(replace(SMALL, b=side, h=side, aggregate=None), LIGHT, Context(each), ALL).found
+    assert max(one.n_x or 0 for one in found if one.size == 8) == most
+
+
+@pytest.mark.parametrize(("aggregate", "most"), [(1.125, 4), (1.126, 3)])
+def test_coarse_aggregate_takes_room(aggregate: float, most: int, each: Edition) -> None:
+    # 4/3 of 1.125 in is 1.5 in.
+    found = arrangements(replace(SMALL, b=12.25, h=12.25, aggregate=aggregate), LIGHT, Context(each), ALL).found
+    assert max(one.n_x or 0 for one in found if one.size == 8) == most
 
 
 # Heavier and lighter
 
 
 def test_a_column_that_fails_is_given_heavier_bars(each: Edition) -> None:
-    heavy = [replace(force, P=force.P * 1.25, Mx=1.3 * (force.Mx or 0.0)) for force in BENT]
-    found = arrangements(SMALL, heavy, Context(each), 5)
-    assert found.present.failed == ("axial and bending",)
+    found = arrangements(SMALL, scaled(1.8), Context(each), 5)
+    assert "axial and bending" in found.present.failed
     assert found.present.ratio is not None
     assert found.present.ratio > 1
     assert found.found
@@ -214,9 +232,8 @@ def test_a_wasteful_column_is_given_lighter_ones(each: Edition) -> None:
 
 def test_more_load_never_gives_lighter_bars(each: Edition) -> None:
     first = []
-    for share in (0.5, 1.0, 1.1, 1.2):
-        forces = [replace(force, P=force.P * share, Mx=(force.Mx or 0.0) * share) for force in BENT]
-        first.append(arrangements(SMALL, forces, Context(each), 1).found[0].A_st)
+    for share in (0.5, 1.0, 1.3, 1.6):
+        first.append(arrangements(SMALL, scaled(share), Context(each), 1).found[0].A_st)
     assert first == sorted(first)
     assert first[-1] > first[0]
 
@@ -230,8 +247,9 @@ def test_the_list_is_in_order_and_has_the_present_arrangement_once(each: Edition
 
 def test_the_other_values_of_the_column_stay(e19: Edition) -> None:
     # An arrangement says what its column says when it stands in the schedule.
-    for one in arrangements(SLENDER, BENT, Context(e19), 3).found:
-        there = arrangements(replace(SLENDER, bars=Bars(one.count, one.size, one.n_x, one.n_y)), BENT, Context(e19), 3)
+    for one in arrangements(SLENDER, scaled(0.7), Context(e19), 3).found:
+        column = replace(SLENDER, bars=Bars(one.count, one.size, one.n_x, one.n_y))
+        there = arrangements(column, scaled(0.7), Context(e19), 3)
         assert there.present == replace(one, present=True)
 
 
@@ -257,7 +275,7 @@ def test_nothing_fits_within_ties_that_are_too_close(each: Edition) -> None:
 
 def test_bars_that_ask_for_larger_ties_are_left_out_and_named(each: Edition) -> None:
     # From memory, ACI 318 25.7.2.2: No. 4 ties around No. 11 and larger bars.
-    column = replace(TIED, b=24.0, h=24.0)
+    column = replace(TIED, b=14.0, h=22.0)
     small = arrangements(column, LIGHT, Context(each), ALL)
     assert {one.size for one in small.found} == {6, 7, 8, 9, 10}
     assert small.rejected["tie size"] > 0
@@ -293,7 +311,7 @@ def test_forces_by_load_are_no_demand_until_they_are_combined(e19: Edition) -> N
     assert any(note.startswith("No verdict on axial strength: Forces are listed by load") for note in loose.notes)
     formed = arrangements(TIED, combined(TIED, rows, "ASCE 7-16"), Context(e19), 3)
     # Hand: 1.2 * 400 + 1.6 * 150 = 720 kip asks for (720/0.52 - 870.4)/56.6 = 9.085 in^2.
-    assert formed.found[0].A_st == pytest.approx(9.36)  # 6-#11 ask for #4 ties; of #3, 12-#8 and 16-#7 come first
+    assert formed.found[0].A_st == pytest.approx(9.48)  # 12-#8; 6-#11 with 9.36 in^2 ask for #4 ties
     assert formed.found[0].ratio is not None
 
 
@@ -307,8 +325,10 @@ def test_what_the_checks_do_not_cover_is_told(e19: Edition) -> None:
 
 
 def test_the_largest_ratio_of_strength_governs(e19: Edition) -> None:
-    found = arrangements(SLENDER, BENT, Context(e19), 1).found[0]
-    results = check(replace(SLENDER, bars=Bars(found.count, found.size, found.n_x, found.n_y)), BENT, Context(e19))
+    forces = scaled(0.7)
+    found = arrangements(SLENDER, forces, Context(e19), 1).found[0]
+    results = check(replace(SLENDER, bars=Bars(found.count, found.size, found.n_x, found.n_y)), forces, Context(e19))
+    assert found.governing == "second-order moment"
     ratios = {one.check: one.ratio for one in results}
     assert found.ratio == ratios[found.governing] == max(ratios[name] or 0.0 for name in ratios if name in STRENGTH)
     assert found.bending == ratios["axial and bending"]

@@ -216,11 +216,11 @@ def test_tension_and_no_axial_force_are_not_magnified(P: float) -> None:
     ("one", "expected"),
     [
         (force(x=(10.0, -40.0), y=(3.0, 4.0)), [(400.0, 10.0, 3.0), (400.0, -40.0, 4.0)]),
-        (Force("U", 5e5, Mx=12e4, My=-24e3), [(500.0, 10.0, -2.0)] * 2),
+        (Force("U", 5e5, Mx=12e4, My=-24e3), [(500.0, 10.0, -2.0)]),
         (Force("U", 5e5, Mx=None, Mx_bottom=12e4, My=0.0), [(500.0, 10.0, 0.0), (500.0, 0.0, 0.0)]),
     ],
 )
-def test_without_a_length_the_points_are_the_two_ends(one: Force, expected: list[tuple[float, float, float]]) -> None:
+def test_without_a_length_the_points_are_the_ends(one: Force, expected: list[tuple[float, float, float]]) -> None:
     column = replace(SQUARE, l_u=None)
     assert points(magnified(column, one)) == expected
     assert checks(column, [one]) == []
@@ -407,7 +407,6 @@ def test_the_root_of_the_chart_is_confirmed_on_the_pad(steps: Any) -> None:
     column = replace(SQUARE, psi_x_bottom=1.0, psi_x_top=3.0)
     Slenderness(ColumnWorking(steps, column, E19)).magnified(force())
     assert abs(steps.values["delta_k"]) < 1e-6
-    assert "root of the alignment-chart equation" in next(one.source for one in steps.givens if one.symbol == "k")
     (bottom,) = [one for one in steps.givens if one.symbol == "psi_A"]
     assert bottom.source == "S-401, rev 2 (inputs/columns.csv, row 2)"
 
