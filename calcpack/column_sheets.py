@@ -6,7 +6,7 @@ the summary can be traced.
 
 from __future__ import annotations
 
-from collections.abc import Iterator, Mapping, Sequence
+from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
 from math import isclose
 from typing import TYPE_CHECKING, Any
@@ -22,6 +22,7 @@ if TYPE_CHECKING:
 __all__ = ["ColumnSheets"]
 
 _SHEAR_DETAILS = ("minimum shear reinforcement", "spacing of shear reinforcement")
+_SPECIAL = "special moment frame"
 # Limit states of the summary, and the checks that count in each.
 _LIMIT_STATES: Mapping[str, tuple[str, ...]] = {
     "axial and bending": ("axial and bending",),
@@ -78,9 +79,9 @@ class ColumnSheets(Scheduled):
         SheetError : no such mark, or no column at all
         RangeError : everything that is wrong with a row, at once
         """
+        self._begin()
         done = [self._done(mark) for mark in self._chosen(marks)]
         shown_by = self._shown_by(done)
-        self._begin()
         self._summary(done, shown_by)
         self._limit_states(done)
         for one in done:
@@ -110,13 +111,9 @@ class ColumnSheets(Scheduled):
         worst: dict[str, _Done] = {}
         if self._job.columns.worked != "every column":
             for one in done:
-                held = worst.get(one.row.group)
-                if held is None or (one.governing.ratio or 0.0) > (held.governing.ratio or 0.0):
-                    worst[one.row.group] = one
-        return {
-            one.row.mark: worst[one.row.group].row.mark if one.row.group in worst and one.row.group else one.row.mark
-            for one in done
-        }
+                group = one.row.group
+                worst[group] = max(worst.get(group, one), one, key=lambda one: _severity(one.governing))
+        return {one.row.mark: worst.get(one.row.group, one).row.mark if one.row.group else one.row.mark for one in done}
 
     def _summary(self, done: Sequence[_Done], shown_by: Mapping[str, str]) -> None:
         head = ("Column", "Section", "Bars", "Ties", "Governing check", "Combination", "Ratio", "Verdict", "Worked")
@@ -131,14 +128,23 @@ class ColumnSheets(Scheduled):
 
     def _limit_states(self, done: Sequence[_Done]) -> None:
         """The largest ratio of each limit state, so that it shows why the others do not govern."""
-        rows = [(one.row.mark, *(one.shown(largest) for largest in _by_limit_state(one.results))) for one in done]
-        self.table(("Column", *_LIMIT_STATES), rows, "Largest ratio of each limit state, over all combinations")
+        states = {name: [_largest(one.results, name) for one in done] for name in (*_LIMIT_STATES, _SPECIAL)}
+        called = {name: found for name, found in states.items() if any(found)}
+        rows = [
+            (one.row.mark, *(one.shown(found[number]) for found in called.values())) for number, one in enumerate(done)
+        ]
+        self.table(("Column", *called), rows, "Largest ratio of each limit state, over all combinations")
 
 
-def _by_limit_state(results: Sequence[CheckResult]) -> Iterator[CheckResult | None]:
-    for names in _LIMIT_STATES.values():
-        found = [one for one in results if one.check.split(",")[0] in names]
-        yield max(found, key=lambda one: (one.verdict == "NG", one.ratio or 0.0), default=None)
+def _largest(results: Sequence[CheckResult], state: str) -> CheckResult | None:
+    """The check of a limit state with the largest ratio; one that is not OK before any other."""
+    names = _LIMIT_STATES.get(state, ())
+    found = [one for one in results if one.check.split(",")[0] in names or (not names and _SPECIAL in one.check)]
+    return max(found, key=_severity, default=None)
+
+
+def _severity(result: CheckResult) -> tuple[bool, float]:
+    return result.verdict == "NG", result.ratio or 0.0
 
 
 def _folded(one: _Done, shown_by: str) -> Mapping[str, Any]:

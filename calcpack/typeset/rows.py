@@ -15,6 +15,7 @@ from calcpack.typeset.tree import Node, children, rebuild
 __all__ = ["COLUMN", "Printed", "condition_row", "equation", "spoken", "symbol_text", "width"]
 
 COLUMN = 31.0  # width of the working column in em of the mathematics
+_RESULT = 5.0
 
 
 @dataclass(frozen=True)
@@ -90,7 +91,8 @@ def equation(symbol: str, layout: Layout, printed: Sequence[Printed], target: Ta
     if all(slot.kind != "symbol" for slot in layout.slots):
         return _written(left, [("=", with_symbols(layout), False)], target)
     symbols = with_symbols(layout)
-    if width(left) + width(symbols) + width(values) + 3 <= COLUMN:
+    # The result in the unit of the line may follow in the same row.
+    if width(left) + width(symbols) + width(values) + 3 <= COLUMN - _RESULT:
         return [(emit(left, target), f"{_head('=', symbols, target)}{_head('=', values, target, True)}")]
     limit = COLUMN - width(left) - 1
     rows = [("=" if not index else "", part, False) for index, part in enumerate(broken(symbols, limit))]

@@ -30,7 +30,7 @@ from calcpack.members.interaction import Interaction, LoadPoint
 from calcpack.members.pad import FloatPad
 from calcpack.package.members import check_members
 from calcpack.sheet import Sheet
-from calcpack.typeset.digits import parse_number
+from calcpack.typeset.digits import last_place, parse_number
 
 # handcalcs calls names of pyparsing that are due to go.
 pytestmark = pytest.mark.filterwarnings("ignore::DeprecationWarning")
@@ -83,13 +83,25 @@ def random_force(rng: random.Random, column: Column, kind: str) -> Force:
         "about x": Force("a", P, Mx),
         "about y": Force("a", P, 0.0, My),
         "tension": Force("a", -0.3 * P, Mx, rng.choice([0.0, My])),
+        "eccentricity about that of the cap": Force("a", P, Mx * rng.uniform(0.1, 0.3), My * 0.1),
         "small eccentricity": Force("a", P, Mx * 1e-3, My * rng.choice([1e-3, 1e-5])),
         "no axial force": Force("a", 0.0, Mx, My),
     }[kind]
 
 
-@pytest.mark.parametrize("kind", ["biaxial", "about x", "about y", "tension", "small eccentricity", "no axial force"])
-def test_the_ratio_worked_by_hand_is_that_of_the_surface(kind: str) -> None:
+@pytest.mark.parametrize(
+    ("kind", "skew"),
+    [
+        ("biaxial", 20),
+        ("about x", 20),
+        ("about y", 20),
+        ("tension", 20),
+        ("no axial force", 20),
+        ("eccentricity about that of the cap", 10),
+        ("small eccentricity", 0),
+    ],
+)
+def test_the_ratio_worked_by_hand_is_that_of_the_surface(kind: str, skew: int) -> None:
     rng = random.Random(f"evidence, {kind}")
     seen = 0
     for _ in range(60):
@@ -103,7 +115,8 @@ def test_the_ratio_worked_by_hand_is_that_of_the_surface(kind: str) -> None:
         assert surface.capped or pad.differences
         assert max(map(abs, pad.differences), default=0.0) < 1e-7, (column, force)
         seen += not surface.capped
-    assert seen > 15
+    # How many had a neutral axis.
+    assert seen >= skew
 
 
 def test_of_several_combinations_the_governing_one_is_worked() -> None:
@@ -303,7 +316,7 @@ def test_odd_bars_on_a_circle_bend_about_y_alone(recording: Any) -> None:
     assert [one.symbol for one in pad.solutions] == ["c"]
 
 
-SLENDER = replace(SQUARE, b=20.0, bars=Bars(8, 9, 3, 3), l_u=240.0, frame="nonsway", beta_dns=0.5)
+SLENDER = replace(SQUARE, b=20.0, bars=Bars(8, 9, 3, 3), l_u=360.0, frame="nonsway", beta_dns=0.5)
 
 
 def test_where_the_least_moments_govern_two_load_points_are_made(steps: Any, each: Edition) -> None:
@@ -311,10 +324,13 @@ def test_where_the_least_moments_govern_two_load_points_are_made(steps: Any, eac
     assert "The least moments act about one axis at a time: two load points." in steps.reasons
     (verdict,) = of_ray(steps)
     assert verdict.ratio == pytest.approx(result.ratio, rel=1e-8)
-    # Hand: P (0.6 + 0.03 h) = 400 * 1.2 = 480 kip*in = 40 kip*ft, magnified; the other axis keeps its own moment.
+    # Hand: P (0.6 + 0.03 h) = 400 * 1.2 = 480 kip*in; E_c I_g = 3,605 * 13,333 = 48.07e6 kip*in^2, 0.4/1.5 of it
+    # 12.82e6; P_c = 9.870 * 12.82e6/360^2 = 976 kip; the magnifier 1/(1 - 400/732) = 2.205, so 88.2 kip*ft. About the
+    # other axis the end moment is magnified, 2.205 * 4 = 8.8 kip*ft where the least one is about x.
     M_ux, M_uy = (result.values[symbol][0] or 0.0 for symbol in ("M_ux", "M_uy"))
-    assert max(M_ux, M_uy) > 40.0
     assert steps.values["M_2_min"] == pytest.approx(480_000.0)
+    assert max(M_ux, M_uy) == pytest.approx(88.2, rel=2e-3)
+    assert min(M_ux, M_uy) == pytest.approx(2.205 * (5.0 if M_ux < M_uy else 4.0), rel=2e-3)
     assert [one.symbol for one in steps.solutions] == ["theta", "c", "c", "c"]
 
 
@@ -469,25 +485,23 @@ def test_verdicts_on_the_ray_are_those_of_the_check(tmp_path: Path) -> None:
     assert {"theta", "c", "P_u", "M_ux", "M_uy", "f_c", "A_b", "phi", "eps_t"} <= below
 
 
-def digests(sheet: Sheet) -> dict[str, str]:
-    return {entry.id: sheet.ledger.hash(entry.id) for entry in solved(sheet)}
+def digests(sheet: Sheet) -> list[str]:
+    return [sheet.ledger.hash(entry.id) for entry in solved(sheet)]
 
 
 def test_the_neutral_axis_is_another_where_a_force_is_another(tmp_path: Path) -> None:
-    before = digests(sheet_of(tmp_path / "a"))
-    # Another length on the same ray: the axis stands where it stood, and rests on other forces.
-    along = sheet_of(tmp_path / "b", FORCES.replace("300,90,60", "330,99,66"))
-    assert [entry.value for entry in solved(along)] == pytest.approx(
-        [entry.value for entry in solved(sheet_of(tmp_path / "c"))], rel=1e-7
-    )
-    changed = {identifier for identifier, digest in digests(along).items() if digest != before[identifier]}
-    assert len(changed) == 4
-    assert changed < set(before)
+    first = sheet_of(tmp_path / "a", marks=["C1"])
+    # Another length on the same ray: the axes stand where they stood, and rest on other forces.
+    along = sheet_of(tmp_path / "b", FORCES.replace("300,90,60", "330,99,66"), marks=["C1"])
+    before, after = ([entry.value for entry in solved(sheet)] for sheet in (first, along))
+    assert after == pytest.approx(before, rel=1e-7)
+    assert len(after) == 4
+    assert all(one != other for one, other in zip(digests(first), digests(along), strict=True))
 
 
 def test_a_force_that_does_not_govern_changes_no_neutral_axis(tmp_path: Path) -> None:
-    other = sheet_of(tmp_path / "b", FORCES.replace("40,30,-20", "44,30,-20"))
-    assert digests(other) == digests(sheet_of(tmp_path / "a"))
+    other = sheet_of(tmp_path / "b", FORCES.replace("40,30,-20", "44,30,-20"), marks=["C1"])
+    assert digests(other) == digests(sheet_of(tmp_path / "a", marks=["C1"]))
 
 
 @pytest.mark.parametrize("off", [1 + 1e-4, 1 - 1e-4])
@@ -526,18 +540,13 @@ def printed(item: dict[str, Any]) -> list[dict[str, float]]:
     ]
 
 
-def totals(item: dict[str, Any]) -> dict[str, float]:
-    return {cell["symbol"]: parse_number(cell["text"]) for cell in item["totals"] if cell}
+def totals(item: dict[str, Any]) -> dict[str, tuple[float, float]]:
+    """The sums below a table, each with one of its last place."""
+    return {cell["symbol"]: number(cell["text"]) for cell in item["totals"] if cell}
 
 
-def result_of(shown: Shown, symbol: str) -> list[float]:
-    """Every printed result of a worked line, in the unit of its line."""
-    return [
-        parse_number(line["shown"].split(" ")[0])
-        for item in shown.of("work")
-        for line in item["lines"]
-        if line["symbol"] == symbol
-    ]
+def number(text: str) -> tuple[float, float]:
+    return parse_number(text.split(" ")[0]), last_place(text.split(" ")[0])
 
 
 @pytest.mark.parametrize("mark", MARKS)
@@ -559,9 +568,9 @@ def test_a_hand_reworks_the_bars_from_the_printed_table(mark: str, tmp_path: Pat
         for moment, arm in (("M_Fx", "y"), ("M_Fy", "x")):
             if moment in one:
                 assert one[moment] == pytest.approx(one["F_s"] * one[arm] / 12, abs=0.012)
-    for symbol, total in sums.items():
+    for symbol, (total, last) in sums.items():
         column = symbol.removesuffix("_sum")
-        assert sum(one[column] for one in rows) == pytest.approx(total, abs=0.02)
+        assert abs(sum(one[column] for one in rows) - total) <= 1.01 * last
 
 
 def load_columns(sheet: Sheet) -> tuple[Any, ...]:
@@ -573,16 +582,23 @@ def load_columns(sheet: Sheet) -> tuple[Any, ...]:
 def test_a_hand_reworks_the_sums_from_the_printed_table(tmp_path: Path, shown: Shown) -> None:
     sheet = sheet_of(tmp_path / "job", marks=["C1"])
     (table,) = [item for item in shown.of("tabulated") if item["title"] == "Bars at the neutral axis"]
-    sums = totals(table)
-    C_c, x_c, y_c, P_n, M_nx, M_ny = (
-        parse_number(sheet.values(symbol)[0].entry.shown.split(" ")[0])
-        for symbol in ("C_c", "x_c", "y_c", "P_n", "M_nx", "M_ny")
-    )
-    unit = {symbol: sheet.values(symbol)[0].entry.shown.split(" ")[1] for symbol in ("C_c", "P_n", "M_nx")}
-    assert unit == {"C_c": "kip", "P_n": "kip", "M_nx": "kip·ft"}
-    assert P_n == pytest.approx(C_c + sums["F_s_sum"], abs=0.02)
-    assert M_nx == pytest.approx(C_c * y_c / 12 + sums["M_Fx_sum"], abs=0.05)
-    assert M_ny == pytest.approx(C_c * x_c / 12 + sums["M_Fy_sum"], abs=0.05)
+    sums = {symbol: total for symbol, (total, _) in totals(table).items()}
+    shown_of = {symbol: sheet.values(symbol)[0].entry.shown for symbol in ("C_c", "x_c", "y_c", "P_n", "M_nx", "M_ny")}
+    assert [shown_of[symbol].split(" ")[1] for symbol in ("C_c", "y_c", "P_n", "M_nx")] == [
+        "kip",
+        "in",
+        "kip",
+        "kip·ft",
+    ]
+    C_c, x_c, y_c = (number(shown_of[symbol])[0] for symbol in ("C_c", "x_c", "y_c"))
+    by_hand = {
+        "P_n": C_c + sums["F_s_sum"],
+        "M_nx": C_c * y_c / 12 + sums["M_Fx_sum"],
+        "M_ny": C_c * x_c / 12 + sums["M_Fy_sum"],
+    }
+    for symbol, found in by_hand.items():
+        stated, last = number(shown_of[symbol])
+        assert abs(found - stated) <= 1.01 * last, symbol
 
 
 def test_a_hand_reworks_the_block_from_its_printed_vertices(tmp_path: Path, shown: Shown) -> None:
@@ -625,5 +641,6 @@ def test_what_is_confirmed_is_said_below_it(tmp_path: Path, shown: Shown) -> Non
 def test_figures_show_the_section_and_the_load(tmp_path: Path, shown: Shown) -> None:
     sheet_of(tmp_path / "job", marks=["C1"])
     section, charts = shown.of("figure")
-    assert "neutral axis" in section["alt"]
+    (c,) = [item["shown"] for item in shown.of("given") if item["symbol"] == "c"][:1]
+    assert f"c = {float(c.split(' ')[0]):.2f} in" in section["alt"]
     assert all(item["svg"].startswith("<svg") and item["caption"] for item in (section, charts))

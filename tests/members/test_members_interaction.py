@@ -14,7 +14,7 @@ from calcpack.members.bar_layout import bar_positions, bar_rows, layer_rows
 from calcpack.members.column import Context, check
 from calcpack.members.column_rules import ColumnWorking
 from calcpack.members.column_section import Bars, Column, Force, Ties
-from calcpack.members.interaction import Interaction, LoadPoint
+from calcpack.members.interaction import Interaction, LoadPoint, end_points
 from calcpack.members.pad import FloatPad
 from calcpack.members.results import CheckResult
 from calcpack.tabulation import Column as Printed
@@ -65,9 +65,7 @@ def test_the_first_bar_of_a_circle_is_on_the_x_axis() -> None:
 def test_rows_of_a_table_of_bars_stand_where_the_bars_do(
     count: int, layout: tuple[int, int] | None, each: Edition
 ) -> None:
-    column = (
-        replace(SQUARE, h=24.0, bars=Bars(count, 9, *layout)) if layout else replace(ROUND, bars=Bars(count, 8))
-    )
+    column = replace(SQUARE, h=24.0, bars=Bars(count, 9, *layout)) if layout else replace(ROUND, bars=Bars(count, 8))
     table = Tabulation("Bars", "bar", (), (Printed("x", 4), Printed("y", 4)))
     made = FloatPad().tabulate(table, bar_rows(ColumnWorking(FloatPad(), column, each)), {})
     assert [(values["x"], values["y"]) for values in made.rows] == [
@@ -86,6 +84,26 @@ def test_layers_hold_every_bar_once(axis: str, across: str, each: Edition) -> No
     )
     places = sorted({round(x if axis == "y" else y, 9) for x, y in bar_positions(column)})
     assert [values[across] for values in made.rows] == pytest.approx(places)
+
+
+@pytest.mark.parametrize(
+    ("force", "expected"),
+    [
+        (ENDED, [(10.0, 0.0), (-40.0, 0.0)]),
+        (Force("a", 100_000.0, 5.0 * FT, 7.0 * FT), [(5.0, 7.0)]),
+        # A single moment acts with each end of the other one.
+        (replace(ENDED, My=7.0 * FT), [(10.0, 7.0), (-40.0, 7.0)]),
+        (replace(ENDED, My=None, My_bottom=1.0 * FT, My_top=2.0 * FT), [(10.0, 1.0), (-40.0, 2.0)]),
+        (Force("a", 100_000.0, 5.0 * FT, None, My_bottom=1.0 * FT, My_top=2.0 * FT), [(5.0, 1.0), (5.0, 2.0)]),
+    ],
+)
+def test_load_points_of_a_force(force: Force, expected: list[tuple[float, float]]) -> None:
+    found = list(end_points([Force("first", 1.0), force]))
+    assert found[0] == LoadPoint(0, 0, "first", 1.0, 0.0, 0.0)
+    assert [(one.Mx / FT, one.My / FT) for one in found[1:]] == expected
+    assert [(one.force, one.place, one.name, one.P) for one in found[1:]] == [
+        (1, place, force.combination, force.P) for place in range(len(expected))
+    ]
 
 
 def test_moments_by_their_ends_make_two_load_points(each: Edition) -> None:
