@@ -40,6 +40,7 @@ class SharingPad:
     pad: SheetPad
     kept: dict[Any, Value] = field(default_factory=dict)
     _waiting: list[Callable[[], None]] = field(default_factory=list)
+    _headed: bool = False
 
     def given(self, symbol: str, value: float, means: str, source: str) -> Value:
         """A given, whatever its source where it was stated first."""
@@ -59,8 +60,6 @@ class SharingPad:
             self._say()
             self.kept[key] = self._work(formula, values)
         return self.kept[key]
-
-    _headed: bool = False
 
     def _work(self, formula: Formula, values: Mapping[str, Value]) -> Value:
         return self.pad.work(formula, **values)
@@ -121,11 +120,13 @@ class _CellPad(SharingPad):
     def reason(self, text: str) -> None:
         """Dropped."""
 
-    def _work(self, formula: Formula, values: Mapping[str, Value]) -> Value:
+    def work(self, formula: Formula, **values: Value) -> Value:
+        """A working; the rounding of each cell is its own, though two ends may need the same length."""
         from calcpack.members.length_schedule import rounded_up
 
-        if formula is not rounded_up:
-            return self.pad.work(formula, **values)
+        return self._round(formula, values) if formula is rounded_up else super().work(formula, **values)
+
+    def _round(self, formula: Formula, values: Mapping[str, Value]) -> Value:
         sheet = self.pad.sheet
         recorded = formula.record(**{name: float(value) for name, value in values.items()}).lines[-1]
         known = {name: value.entry.id for name, value in values.items()}
@@ -158,7 +159,7 @@ class LengthSheets(Scheduled):
         self._begin()
         self._show("heading", reads=[["job lengths", repr(asked)]], text=_TITLE, level=2)
         stated = SharingPad(SheetPad(self))
-        increment = [state_strengths(stated, one, asked.basis) for one in asked.strengths][0]
+        increment = state_strengths(stated, asked.strengths, asked.basis)
         with self._holding() as items:
             worked = self._worked_example(asked, dict(stated.kept), increment)
         notes = NoteList()
@@ -171,7 +172,8 @@ class LengthSheets(Scheduled):
             except InputError as error:
                 raise error.at(self._place()) from None
             printed = worked if one is asked.strengths[0] else {}
-            self._length_table(table, asked, printed, list(self._values.values())[before:])
+            made = list(self._values.values())[before:]
+            self._length_table(table, asked, printed, made, first=one is asked.strengths[0])
         self._length_notes(asked, notes)
         for item in items:
             notebook.show(item)
@@ -195,22 +197,28 @@ class LengthSheets(Scheduled):
         return made
 
     def _length_table(
-        self, table: LengthTable[Value], asked: Lengths, printed: Mapping[int, Value], made: Sequence[Value]
+        self,
+        table: LengthTable[Value],
+        asked: Lengths,
+        printed: Mapping[int, Value],
+        made: Sequence[Value],
+        first: bool,
     ) -> None:
         from calcpack.members.length_notes import table_title
         from calcpack.members.length_schedule import COLUMNS, rounded_up
 
-        page = _Cells(asked.basis.increment)
         rows = []
         for size, cells in table.rows.items():
             linked = printed if size == asked.worked else {}
-            cells_of = [page.cell(cell, linked.get(place)) for place, cell in enumerate(cells)]
-            rows.append({"label": f"#{size}", "cells": cells_of})
+            shown = [_cell(cell, linked.get(place), asked.basis.increment) for place, cell in enumerate(cells)]
+            rows.append({"label": f"#{size}", "cells": shown})
         sheet: Any = self
+        equations = sheet._general(rounded_up.clause(), rounded_up) if first else []
+        title = "Lengths rounded up" if first else "Lengths rounded up in the same way"
         self._show(
-            "tabulated", [value.entry for value in made], title="Lengths rounded up", label="bar",
+            "tabulated", [value.entry for value in made], title=title, label="bar",
             caption=f"{table_title(table.strengths)}: development and lap lengths, in",
-            equations=sheet._general(rounded_up.clause(), rounded_up),
+            equations=equations,
             columns=[{"symbol": column.symbol, "unit": column.words} for column in COLUMNS], rows=rows, totals=[],
         )  # fmt: skip
 
@@ -223,25 +231,15 @@ class LengthSheets(Scheduled):
             self._note("reason", [f"{number}. {text}"])
 
 
-@dataclass
-class _Cells:
-    """Cells as the page prints them: a length stands once under its own id, and is linked to from then on."""
+def _cell(cell: LengthCell[Value], printed: Value | None, increment: float) -> dict[str, str]:
+    """A cell as the page prints it; `printed` is its length where the page works it in full, and is linked to."""
+    from calcpack.members.length_notes import dash
 
-    increment: float
-    _made: set[str] = field(default_factory=set)
-
-    def cell(self, cell: LengthCell[Value], printed: Value | None) -> dict[str, str]:
-        """One cell; `printed` is its length where the page works it in full."""
-        value = printed or cell.rounded
-        if value is None:
-            from calcpack.members.length_notes import dash
-
-            return {"id": "", "text": dash(cell.notes), "link": "", "sheet": ""}
-        identifier = value.entry.id
-        here = "" if printed or identifier in self._made else identifier
-        self._made.add(identifier)
-        link = "" if here else identifier
-        return {"id": here, "text": _text(float(value), self.increment), "link": link, "sheet": ""}
+    value = printed or cell.rounded
+    if value is None:
+        return {"id": "", "text": dash(cell.notes), "link": "", "sheet": ""}
+    here, link = ("", value.entry.id) if printed else (value.entry.id, "")
+    return {"id": here, "text": _text(float(value), increment), "link": link, "sheet": ""}
 
 
 def _text(value: float, increment: float) -> str:

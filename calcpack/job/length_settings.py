@@ -22,7 +22,6 @@ __all__ = ["EQUATIONS", "LengthSettings", "Lengths", "length_settings", "lengths
 
 EQUATIONS = ("table", "general")
 _SOURCE = "job.toml, [lengths]"
-_NORMAL = "normalweight concrete, default of the schedule"
 _STRONGEST = 20_000.0
 _LARGEST_STEP = 12.0
 _USUAL = 8
@@ -121,7 +120,7 @@ def _basis(place: Place, sizes: tuple[int, ...]) -> Basis:
         hooks=_ends(place.table("hooks", required=False), "tail_cover"),
         heads=_ends(place.table("heads", required=False)),
         confined=_flag(compression, "confined"), lap_ties=_flag(compression, "lap_ties"),
-        sizes=sizes, source=_SOURCE if place.keys else Basis().source,
+        sizes=sizes, source=_SOURCE,
     )  # fmt: skip
 
 

@@ -22,9 +22,10 @@ def refuse_problems(column: ColumnLike, edition: Edition) -> None:
     ------
     RangeError : a value outside the range of its clause or impossible in the section
     """
-    problems = [*_sizes(column), *_materials(column, edition), *_bars(column), *slender_problems(column, edition)]
+    problems = [*_sizes(column), *_bars(column)]
     if not problems:
         problems = list(_fit(column))
+    problems += [*_materials(column, edition), *slender_problems(column, edition)]
     if problems:
         raise RangeError(f"column {column.mark}", problems, row_of(column))
 

@@ -65,7 +65,7 @@ class Basis:
     confined: bool = False
     lap_ties: bool = False
     sizes: tuple[int, ...] = tuple(BARS)
-    source: str = "defaults of the schedule"
+    source: str = "default of the schedule"
 
 
 @dataclass(frozen=True)
@@ -76,4 +76,4 @@ class Strengths:
     f_y: float
     coating: str = "none"
     lamb: float = 1.0
-    source: str = "defaults of the schedule"
+    source: str = "default of the schedule"

@@ -127,7 +127,8 @@ def _straight(tables: Sequence[Strengths], basis: Basis, edition: Edition) -> It
 
 def _hooks(ends: EndConditions, edition: Edition) -> Iterator[str]:
     ties = "ties or stirrups at 3 d_b or closer" if edition.hook_by_cover else "ties or stirrups of A_th = 0.4 A_hs or more"
-    tail = f", cover of {ends.tail_cover} or more on the extension of a 90° hook" if ends.tail_cover else ""
+    counted = edition.hook_by_cover and ends.tail_cover is not None
+    tail = f", cover of {ends.tail_cover} or more on the extension of a 90° hook" if counted else ""
     yield f"Standard hooks (25.3.1, 25.4.3): {_side(ends)}{tail}; {_confinement(ends, ties)}{_core(ends, edition)}."
 
 

@@ -39,6 +39,7 @@ __all__ = [
 T = TypeVar("T")
 _CLOSE = 6.0
 _HIGH_GRADE = 80_000.0
+_NORMAL = "normalweight concrete, default of the schedule"
 
 
 # What exceeds a multiple by a billionth is the noise of arithmetic; a ratio of that much over 1 is OK as well.
@@ -156,11 +157,15 @@ _CONDITIONS: Mapping[str, Any] = {
 }
 
 
-def state_strengths(pad: Pad[T], strengths: Strengths, basis: Basis) -> T:
-    """State what all cells of a table use; returns the increment."""
+def state_strengths(pad: Pad[T], tables: Sequence[Strengths], basis: Basis) -> T:
+    """State what the cells of the tables use, symbol by symbol; returns the increment."""
     for symbol in ("f_c", "f_y", "lamb"):
-        pad.given(symbol, float(getattr(strengths, symbol)), lookup(symbol).meaning, strengths.source)
-    return pad.given("l_increment", basis.increment, lookup("l_increment").meaning, basis.source)
+        for one in tables:
+            value = float(getattr(one, symbol))
+            source = _NORMAL if (symbol, value) == ("lamb", 1.0) else one.source
+            pad.given(symbol, value, lookup(symbol).meaning, source)
+    stated = "default of the schedule" if basis.increment == Basis().increment else basis.source
+    return pad.given("l_increment", basis.increment, lookup("l_increment").meaning, stated)
 
 
 def work_column(pad: Pad[T], row: Termination, increment: T, edition: Edition) -> tuple[T, T]:

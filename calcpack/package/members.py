@@ -51,6 +51,9 @@ def check_members(job: Job) -> JobChecks:
     code = edition(job.codes.concrete)
     errors: list[InputError] = []
     columns, forces, terminations, stories = (rows_of(errors, reader, job.root) for reader in _READERS)
+    if not errors:
+        attempt(errors, match, columns, forces)
+        attempt(errors, match_stories, columns, stories)
     attempt(errors, lambda: job.givens)
     results: list[CheckResult] = []
     owed: list[tuple[str, str]] = []
@@ -67,9 +70,6 @@ def check_members(job: Job) -> JobChecks:
     for termination in terminations:
         found = attempt(errors, anchorage.check, termination, code)
         results += [found] if found else []
-    if not errors:
-        attempt(errors, match, columns, forces)
-        attempt(errors, match_stories, columns, stories)
     raise_noted(errors)
     files = [{row.mark: row.file for row in rows} for rows in (columns, terminations)]
     return JobChecks(tuple(results), tuple(owed), *files)
