@@ -67,6 +67,11 @@ def _parser() -> argparse.ArgumentParser:
         if name == "bars":
             command.add_argument("mark", help="the mark of a column in the schedule")
             command.add_argument("--limit", type=int, default=10, metavar="N", help="list at most N (default: 10)")
+        if name == "lengths":
+            for kind in ("csv", "xlsx"):
+                default = f"draft/lengths.{kind}"
+                told = f"write it to FILE of the job folder as {kind.upper()} (default: {default})"
+                command.add_argument(f"--{kind}", nargs="?", const=default, metavar="FILE", help=told)
     return parser
 
 
@@ -149,6 +154,23 @@ def _trace(options: argparse.Namespace) -> int:
     return OK
 
 
+def _lengths(options: argparse.Namespace) -> int:
+    from calcpack.package import length_files
+
+    job = _job(options)
+    makers = {".csv": (options.csv, length_files.to_csv), ".xlsx": (options.xlsx, length_files.to_xlsx)}
+    asked = [(suffix, name, make) for suffix, (name, make) in makers.items() if name is not None]
+    targets = [length_files.target(job.root, name, suffix) for suffix, name, _ in asked]
+    schedule = length_files.schedule_of(job)
+    made = [make(schedule) for _, _, make in asked]
+    for path, data in zip(targets, made, strict=True):
+        length_files.write_file(path, data)
+    print(length_files.to_text(schedule))
+    for path in targets:
+        print(f"written: {path}")
+    return OK
+
+
 def _validation(options: argparse.Namespace) -> int:
     from calcpack import validation
 
@@ -189,6 +211,7 @@ _COMMANDS: tuple[tuple[str, Callable[[argparse.Namespace], int], str], ...] = (
     ("bars", _bars, "list arrangements of longitudinal bars that would satisfy every check of a column"),
     ("draft", _draft, "run the sheets and write the package as it stands to draft/"),
     ("issue", _issue, "issue the newest revision of job.toml to record/issued/"),
+    ("lengths", _lengths, "print the development and lap schedule for the general notes, or write it as a table"),
     ("trace", _trace, "print where a value comes from and what it goes into"),
     ("validation", _validation, "run the published cases this release is validated against"),
 )

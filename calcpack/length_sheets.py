@@ -188,7 +188,7 @@ class LengthSheets(Scheduled):
         self._show("heading", text=f"Worked example: #{size}, {table_title(strengths)}", level=2)
         pad, made = SharingPad(SheetPad(self), kept), dict[int, Value]()
         for place, column in enumerate(COLUMNS):
-            pad.heading(f"#{size} {column.words}")
+            pad.heading(f"#{size} {column.name}")
             row = row_for(column, size, strengths, asked.basis, self.code)
             try:
                 _, made[place] = work_column(pad, row, increment, self.code)
@@ -225,10 +225,11 @@ class LengthSheets(Scheduled):
     def _length_notes(self, asked: Lengths, notes: NoteList) -> None:
         from calcpack.members.length_notes import assumptions
 
+        sheet: Any = self
         self._show("heading", text="Notes to the lengths", level=3)
         texts = [*notes.texts, *assumptions(asked.strengths, asked.basis, self.code)]
         for number, text in enumerate(texts, 1):
-            self._note("reason", [f"{number}. {text}"])
+            sheet._note("reason", [f"{number}. {text}"])
 
 
 def _cell(cell: LengthCell[Value], printed: Value | None, increment: float) -> dict[str, str]:

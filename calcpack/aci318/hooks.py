@@ -29,6 +29,11 @@ __all__ = [
     "hook_minimum",
     "hook_reduced",
     "hook_special_frame",
+    "joint_hook",
+    "joint_hook_uncoated",
+    "joint_straight",
+    "joint_straight_outside_core",
+    "joint_straight_top",
     "tie_bend_diameter",
     "tie_extension_90",
     "tie_extension_135",
@@ -90,6 +95,52 @@ def hook_special_frame(*, f_y: Stress, f_c: Stress, lamb: Ratio, d_b: Length) ->
     root_f_c = min(sqrt(f_c), 100.0)
     l_dh = max(f_y * d_b / (65 * lamb * root_f_c), 8 * d_b, 6 * inch)
     return l_dh
+
+
+# The same length with the minima that the clause has for lightweight concrete, for coated bars and straight ones.
+@formula(
+    ACI_318_14("18.8.5.1"),
+    ACI_318_19("18.8.5.1"),
+    empirical=True,
+    limits=(CONCRETE, YIELD_LEAST, YIELD_100, LIGHTWEIGHT, BAR_DIAMETER_TO_NO_11),
+)
+def joint_hook_uncoated(*, f_y: Stress, f_c: Stress, lamb: Ratio, d_b: Length) -> Length:
+    """Development length of an uncoated hook inside the core of a joint of a special moment frame."""
+    root_f_c = min(sqrt(f_c), 100.0)
+    if lamb < 1.0:
+        l_dh_j = max(f_y * d_b / (65 * lamb * root_f_c), 10 * d_b, 7.5 * inch)
+    else:
+        l_dh_j = max(f_y * d_b / (65 * lamb * root_f_c), 8 * d_b, 6 * inch)
+    return l_dh_j
+
+
+@formula(ACI_318_14("18.8.5.1"), ACI_318_19("18.8.5.1"))
+def joint_hook(*, l_dh_j: Length, psi_e: Ratio) -> Length:
+    """Development length of a hook in a joint of a special moment frame, with its coating factor (18.8.5.5)."""
+    l_dh = psi_e * l_dh_j
+    return l_dh
+
+
+@formula(ACI_318_14("18.8.5.3(a)"), ACI_318_19("18.8.5.3(a)"))
+def joint_straight(*, l_dh_j: Length, psi_e: Ratio) -> Length:
+    """Development length of a straight bar in such a joint, 12 in of concrete or less cast below it."""
+    l_d = 2.5 * psi_e * l_dh_j
+    return l_d
+
+
+@formula(ACI_318_14("18.8.5.3(b)"), ACI_318_19("18.8.5.3(b)"))
+def joint_straight_top(*, l_dh_j: Length, psi_e: Ratio) -> Length:
+    """Development length of a straight bar in such a joint, more than 12 in of concrete cast below it."""
+    l_d = 3.25 * psi_e * l_dh_j
+    return l_d
+
+
+# What lies outside the core counts less: each inch inside is worth 1.6 in outside.
+@formula(ACI_318_14("18.8.5.4"), ACI_318_19("18.8.5.4"))
+def joint_straight_outside_core(*, l_d: Length, l_core: Length) -> Length:
+    """Development length of a straight bar of which only the length `l_core` lies in the confined core."""
+    l_dm = 1.6 * (l_d - l_core) + l_core
+    return l_dm
 
 
 @formula(*_HOOK, limits=(BAR_DIAMETER,))

@@ -13,7 +13,7 @@ from pathlib import Path
 
 from calcpack.errors import Problem, TableError
 from calcpack.job.givens import GivenValue, read_givens
-from calcpack.job.length_settings import LengthSettings, length_settings
+from calcpack.job.length_settings import AS_DEFAULT, LengthSettings, length_settings
 from calcpack.job.settings import AS_USUAL, ColumnSettings, column_settings, load_settings
 from calcpack.job.toml import Place, TomlFile
 from calcpack.loads.combinations import AS_CODE, Settings
@@ -114,7 +114,7 @@ class Job:
     combining: Settings = AS_CODE
     live_basis: str = ""
     columns: ColumnSettings = AS_USUAL
-    lengths: LengthSettings = LengthSettings()
+    lengths: LengthSettings = AS_DEFAULT
 
     @cached_property
     def givens(self) -> tuple[GivenValue, ...]:

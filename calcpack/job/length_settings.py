@@ -9,6 +9,7 @@ from typing import TYPE_CHECKING, Any
 
 from calcpack.errors import Problem, TableError, UnitError
 from calcpack.job.bars import BAR_SIZES, bar_size
+from calcpack.job.records import ColumnRow, Termination
 from calcpack.job.schedules import COATINGS, read_columns, read_terminations
 from calcpack.job.toml import Place
 from calcpack.job.wording import shown
@@ -18,9 +19,10 @@ from calcpack.units import LENGTH, STRESS, Dimension, read
 if TYPE_CHECKING:
     from calcpack.job.folder import Job
 
-__all__ = ["EQUATIONS", "LengthSettings", "Lengths", "length_settings", "lengths_of"]
+__all__ = ["AS_DEFAULT", "EQUATIONS", "LengthSettings", "Lengths", "length_settings", "lengths_of"]
 
 EQUATIONS = ("table", "general")
+_PLAIN = Basis()
 _SOURCE = "job.toml, [lengths]"
 _STRONGEST = 20_000.0
 _LARGEST_STEP = 12.0
@@ -42,9 +44,12 @@ class LengthSettings:
     worked : the bar size worked in full on the sheet
     """
 
-    basis: Basis = Basis()
+    basis: Basis = _PLAIN
     strengths: tuple[Strengths, ...] = ()
     worked: int = _USUAL
+
+
+AS_DEFAULT = LengthSettings()
 
 
 @dataclass(frozen=True)
@@ -59,7 +64,7 @@ class Lengths:
 def length_settings(place: Place, concrete: str) -> LengthSettings:
     """The table ``[lengths]``; `concrete` is the concrete standard of the job, empty where it is not known."""
     place.only(*_KEYS)
-    sizes = _list(place, "sizes", _size) or BAR_SIZES
+    sizes = _list(place, "sizes", lambda key, value: _size_of(place, key, value)) or BAR_SIZES
     return LengthSettings(_basis(place, sizes), _strengths(place, concrete), _worked(place, sizes))
 
 
@@ -84,7 +89,8 @@ def lengths_of(job: Job) -> Lengths:
 def _used(job: Job) -> Iterator[Strengths]:
     """Strengths that occur together in the tables, weakest concrete first; the file that names them is the source."""
     found: dict[tuple[float, float, int, float], dict[str, None]] = {}
-    for row in (*read_columns(job.root), *read_terminations(job.root)):
+    rows: list[ColumnRow | Termination] = [*read_columns(job.root), *read_terminations(job.root)]
+    for row in rows:
         key = (row.f_c, row.f_y, COATINGS.index(getattr(row, "coating", "none")), row.lamb)
         found.setdefault(key, {})[row.file] = None
     for (f_c, f_y, coating, lamb), files in sorted(found.items(), key=lambda one: one[0]):
@@ -162,10 +168,6 @@ def _plain(key: str, value: object) -> str:
     return f"#{value}" if key == "sizes" else f"{value:,g} psi" if isinstance(value, float) else repr(value)
 
 
-def _size(place: Place) -> Callable[[str, Any], int]:
-    return lambda key, value: _size_of(place, key, value)
-
-
 def _size_of(place: Place, key: str, value: Any) -> int:
     try:
         return bar_size(value)
@@ -228,13 +230,13 @@ def _lamb(place: Place) -> float:
 
 def _increment(place: Place) -> float:
     if "increment" not in place.keys:
-        return Basis().increment
+        return _PLAIN.increment
     step = _measured(place, "increment", place.keys["increment"], LENGTH)
     if step is not None and ((4 * step) % 1 or step > _LARGEST_STEP):
         found = f"increment = {shown(place.keys['increment'])}"
         place.report("increment", found, f"a multiple of 1/4 in, up to {_LARGEST_STEP:g} in", "e.g. '1 in'")
-        return Basis().increment
-    return step or Basis().increment
+        return _PLAIN.increment
+    return step or _PLAIN.increment
 
 
 def _extent(place: Place, key: str) -> Extent | None:

@@ -23,7 +23,7 @@ class _Placed:
 
 @dataclass(frozen=True)
 class Termination(_Placed):
-    """A place where a bar is developed, hooked, headed or spliced; lengths in, stresses psi, areas in^2.
+    """A place where a bar is developed, hooked, headed or spliced; lengths in, stresses psi, areas in^2, forces lb.
 
     `bar` is the bar number, `bar_text` its size as written; ``None`` is what the table left empty.
     """
@@ -50,6 +50,17 @@ class Termination(_Placed):
     A_s_provided: float | None
     lap_class: str | None
     available: float | None
+    bundle: int
+    spliced: float | None
+    other_bar: int | None
+    bar_stress: float | None
+    spiral: bool
+    M_n: float | None
+    V_u: float | None
+    l_a: float | None
+    confined_reaction: bool
+    joint: str
+    excess_exclusion: str
     member: str
     location: str
     source: str

@@ -5,6 +5,7 @@ Here a file is checked for what it says; whether a code allows it is decided whe
 
 from __future__ import annotations
 
+import re
 from collections.abc import Callable, Iterable, Iterator, Sequence
 from dataclasses import replace
 from pathlib import Path
@@ -20,6 +21,7 @@ from calcpack.units import AREA, FORCE, LENGTH, MOMENT, RATIO, STRESS
 
 __all__ = [
     "COATINGS",
+    "EXCLUSIONS",
     "KINDS",
     "LOADS",
     "ColumnRow",
@@ -44,13 +46,32 @@ KINDS = (
     "straight compression",
     "lap tension",
     "lap compression",
+    "mechanical splice",
 )
 COATINGS = ("none", "epoxy", "zinc", "dual")
+EXCLUSIONS = ("noncontinuous support", "f_y required", "continuous bars", "seismic")
 LOADS = ("D", "L", "Lr", "S", "R", "W", "E", "H", "F", "T")
 
 
 def _bar(text: str) -> tuple[int, str]:
     return bar_size(text), text
+
+
+def _bundle(text: str) -> int:
+    if text not in ("1", "2", "3", "4"):
+        raise ValueError("a bundle holds up to four bars (25.6.1.1)")
+    return int(text)
+
+
+def _share(text: str) -> float:
+    """A share written ``50%`` or ``0.5``."""
+    number = text.removesuffix("%").strip()
+    if not re.fullmatch(r"[0-9]+\.?[0-9]*|\.[0-9]+", number):
+        raise ValueError("write 50% or 0.5")
+    share = float(number) / 100 if text.endswith("%") else float(number)
+    if share > 1:
+        raise ValueError(f"above all of it: was this meant to be {number}%?")
+    return share
 
 
 def _length(symbol: str) -> Column:
@@ -93,6 +114,17 @@ _TERMINATION = (
     Column("A_s_provided", AREA, above=0),
     Column("lap_class", choices=("A", "B")),
     _length("available"),
+    Column("bundle", default=1, parse=_bundle, allowed="the number of bars in the bundle, 1 to 4"),
+    Column("spliced", parse=_share, allowed="the share of the bars spliced, e.g. '50%' or '0.5'"),
+    Column("other_bar", parse=_bar, allowed="a bar size, #3 to #11, #14 or #18"),
+    Column("bar_stress", parse=_share, allowed="the tensile stress over f_y, e.g. '40%' or '0.4'"),
+    _yes("spiral"),
+    Column("M_n", MOMENT, above=0),
+    Column("V_u", FORCE, above=0),
+    Column("l_a", LENGTH, least=0),
+    _yes("confined_reaction"),
+    Column("joint", default="", choices=("special",)),
+    Column("excess_exclusion", default="", choices=EXCLUSIONS),
     Column("member", default=""),
     Column("location", default=""),
     _SOURCE,
@@ -182,7 +214,8 @@ def read_terminations(job_root: Path) -> tuple[Termination, ...]:
 
 
 def _termination(row: Row) -> Termination:
-    return _record(Termination, row, bar=row.values["bar"][0], bar_text=row.values["bar"][1])
+    bar, other = row.values["bar"], row.values["other_bar"]
+    return _record(Termination, row, bar=bar[0], bar_text=bar[1], other_bar=other[0] if other else None)
 
 
 def _termination_rule(table: Table) -> Iterator[Problem]:

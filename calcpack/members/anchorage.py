@@ -10,23 +10,26 @@ from collections.abc import Iterable, Mapping
 from dataclasses import dataclass
 from typing import Generic, TypeVar
 
+from calcpack.aci318 import splices
 from calcpack.aci318.bars import bar
 from calcpack.aci318.editions import Edition
 from calcpack.errors import InputError, RangeError
+from calcpack.formula import Formula
 from calcpack.members.anchorage_conditions import requirements
+from calcpack.members.anchorage_excess import no_reduction
 from calcpack.members.anchorage_rules import (
-    COMPRESSION_LAP_RULES,
     COMPRESSION_RULES,
     HEAD_RULES,
     HOOK_RULES,
-    LAP_RULES,
+    JOINT_RULES,
     STRAIGHT_RULES,
     Rule,
 )
+from calcpack.members.anchorage_splices import COMPRESSION_LAP_RULES, LAP_RULES, MECHANICAL_RULES
 from calcpack.members.pad import FloatPad, Pad
 from calcpack.members.results import CheckResult, Requirement, measured, verdict_of
 from calcpack.members.sources import NOMINAL
-from calcpack.members.termination import TerminationLike, place
+from calcpack.members.termination import TerminationLike, place, termination_of
 from calcpack.members.termination_problems import refuse_problems
 from calcpack.members.working import Choice, Stated, Working
 from calcpack.symbols import lookup
@@ -74,7 +77,31 @@ _KINDS = {
     "straight compression": _Kind("l_dc", "l_dc_a", COMPRESSION_RULES, "#{} bar in compression developed"),
     "lap tension": _Kind("l_st", "l_st", LAP_RULES, "tension lap of #{} bars"),
     "lap compression": _Kind("l_sc", "l_sc_a", COMPRESSION_LAP_RULES, "compression lap of #{} bars"),
+    "mechanical splice": _Kind("P_splice", "P_splice", MECHANICAL_RULES, "mechanical splice of #{} bar"),
 }
+
+
+@dataclass(frozen=True)
+class _OfSizes:
+    """A lap of bars of two sizes: how the larger is developed, the symbols of both parts, and what takes the larger."""
+
+    developed: str
+    l_larger: str
+    l_smaller: str
+    formula: Formula
+
+
+_OF_SIZES = {
+    "lap tension": _OfSizes("straight tension", "l_d", "l_st_s", splices.lap_tension_of_sizes),
+    "lap compression": _OfSizes("straight compression", "l_dc", "l_sc_s", splices.lap_compression_of_sizes),
+}
+
+
+def _rules(row: TerminationLike) -> Mapping[str, Rule]:
+    """The rules of the arguments, by kind and place."""
+    rules = _KINDS[row.kind].rules
+    return {**rules, **JOINT_RULES[row.kind]} if row.joint else rules
+
 
 # Symbols that the schedule states, by the name of the column.
 _STATED = {
@@ -90,12 +117,22 @@ _STATED = {
     "s": "spacing",
     "A_s_required": "A_s_required",
     "A_s_provided": "A_s_provided",
+    "n_bundle": "bundle",
+    "r_spliced": "spliced",
+    "r_stress": "bar_stress",
+    "M_n": "M_n",
+    "V_u": "V_u",
+    "l_a": "l_a",
 }
+
+# What the standard of the bar states.
+_NOMINAL = {"d_b": "d_b", "A_b": "A_b"}
 
 # What is taken where the schedule states nothing does not come from the schedule.
 _DEFAULTS = {
     "lamb": (1.0, "normalweight concrete, default of the schedule"),
     "K_tr": (0.0, "no transverse reinforcement counted, default of the schedule"),
+    "l_a": (None, "no embedment counted, default of the schedule"),
 }
 
 
@@ -108,19 +145,19 @@ class _RowRules:
 
     def choice(self, symbol: str) -> Choice | None:
         """The formula that serves a symbol for this row; None where the row states it."""
-        rule = _KINDS[self.row.kind].rules.get(symbol)
+        rule = _rules(self.row).get(symbol)
         return rule(self.row, self.edition) if rule else None
 
     def stated(self, symbol: str) -> Stated:
         """What the row, its defaults or the bar standard state."""
         means = lookup(symbol).meaning
-        if symbol == "d_b":
-            return Stated(bar(self.row.bar).d_b, f"{means}, #{self.row.bar}", NOMINAL)
+        if symbol in _NOMINAL:
+            return Stated(getattr(bar(self.row.bar), _NOMINAL[symbol]), f"{means}, #{self.row.bar}", NOMINAL)
         if symbol == "c_side" and self.row.kind == "headed":
             means = "side cover of the headed bar"
         value = getattr(self.row, _STATED[symbol])
         default, source = _DEFAULTS.get(symbol, (None, ""))
-        return Stated(value, means, source if value == default else place(self.row))
+        return Stated(value or 0.0, means, source if value == default else place(self.row))
 
 
 def required_length(pad: Pad[T], row: TerminationLike, edition: Edition) -> Required[T]:
@@ -131,31 +168,76 @@ def required_length(pad: Pad[T], row: TerminationLike, edition: Edition) -> Requ
     RangeError : everything that is wrong with the row, at once
     """
     refuse_problems(row, edition)
+    if row.other_bar is not None and row.other_bar != row.bar:
+        return _lap_of_sizes(pad, row, edition, _OF_SIZES[row.kind])
     symbol = _KINDS[row.kind].symbol
     working = Working(pad, _RowRules(row, edition))
     working.state(symbol)
     value = working.value(symbol)
-    notes = [_NOT_REDUCED] if row.A_s_required is not None and not _reduces(row, edition) else []
+    notes = [*_notes(row, edition)]
     for text in notes:
         pad.reason(f"{text}.")
     asked = requirements(working, row, edition)
-    said = [str(one) if one.met else f"Not met: {one}" for one in asked]
-    return Required(symbol, value, cited_clause(row, edition), asked, (*said, *notes))
+    return Required(symbol, value, cited_clause(row, edition), asked, (*_said(asked), *notes))
 
 
-_NOT_REDUCED = "No reduction for excess reinforcement: not permitted for this kind (25.4.10.1)"
+def _lap_of_sizes(pad: Pad[T], row: TerminationLike, edition: Edition, sizes: _OfSizes) -> Required[T]:
+    """The greater of the development of the larger bar and the lap of the smaller one."""
+    smaller, larger = sorted([row.bar, row.other_bar or row.bar])
+    # The ties of a lap are not those of development in compression; a lap takes no reduction for excess reinforcement.
+    alone = {"other_bar": None, "available": None}
+    plain = {"confining_ties": row.kind == "lap tension" and row.confining_ties, "lap_class": None, "spliced": None}
+    areas = {"A_s_required": None, "A_s_provided": None, "bar_stress": None}
+    one = termination_of(row, kind=sizes.developed, bar=larger, **alone, **plain, **areas)
+    other = termination_of(row, bar=smaller, **alone)
+    working, second = Working(pad, _RowRules(one, edition)), Working(pad, _RowRules(other, edition))
+    pad.reason(f"Larger bar, #{larger}: developed.")
+    working.state(sizes.l_larger)
+    parts = {sizes.l_larger: working.value(sizes.l_larger)}
+    second.values.update({symbol: value for symbol, value in working.values.items() if symbol in _STATED})
+    pad.reason(f"Smaller bar, #{smaller}: lapped.")
+    symbol = _KINDS[row.kind].symbol
+    second.state(symbol)
+    parts[sizes.l_smaller] = second.value(symbol)
+    value = pad.work(sizes.formula, **parts)
+    notes = [*_notes(row, edition)]
+    for text in notes:
+        pad.reason(f"{text}.")
+    asked = requirements(second, other, edition)
+    clause = sizes.formula.clause(edition.standard).number
+    return Required(symbol, value, clause, asked, (*_said(asked), *notes))
+
+
+def _said(asked: Iterable[Requirement]) -> list[str]:
+    return [str(one) if one.met else f"Not met: {one}" for one in asked]
+
+
+def _notes(row: TerminationLike, edition: Edition) -> Iterable[str]:
+    """What a reader has to know beside the length."""
+    reason = no_reduction(row, edition) if row.A_s_required is not None else ""
+    if reason:
+        yield f"No reduction for excess reinforcement: {reason}"
+    if row.bundle > 1:
+        yield f"Bundle of {row.bundle}: enclosed within transverse reinforcement (25.6.1.2)"
+        if row.kind in _OF_SIZES:
+            yield "Bars of a bundle are lapped one by one; their laps do not overlap (25.6.1.7)"
+    if row.joint and row.kind == "straight tension":
+        yield "A part of the bar outside the confined core counts 1/1.6 of its length (18.8.5.4)"
+    staggered = row.bar_stress is not None and row.spliced is not None
+    if row.kind == "lap tension" and staggered and "Class A" in _lap_reason(row, edition):
+        yield "Laps of class A in adjacent column bars are staggered by l_d (Table 10.7.5.2.2)"
+
+
+def _lap_reason(row: TerminationLike, edition: Edition) -> str:
+    choice = LAP_RULES["l_st"](row, edition)
+    return choice.reason if choice else ""
 
 
 def cited_clause(row: TerminationLike, edition: Edition) -> str:
     """The clause of the equation that a row's length comes from."""
-    kind = _KINDS[row.kind]
-    choice = kind.rules[kind.cited](row, edition)
+    cited = "l_dh_j" if row.joint else _KINDS[row.kind].cited
+    choice = _rules(row)[cited](row, edition)
     return choice.formula.clause(edition.standard).number if choice else ""
-
-
-def _reduces(row: TerminationLike, edition: Edition) -> bool:
-    choice = _KINDS[row.kind].rules[_KINDS[row.kind].symbol](row, edition)
-    return choice is not None and "A_s_required" in choice.formula.arguments
 
 
 def work_termination(pad: Pad[T], row: TerminationLike, edition: Edition) -> tuple[T, CheckResult]:
@@ -169,7 +251,8 @@ def work_termination(pad: Pad[T], row: TerminationLike, edition: Edition) -> tup
     ratio = None
     if row.available is not None:
         available = pad.given("l_available", row.available, lookup("l_available").meaning, place(row))
-        what = f"{row.mark}: {_KINDS[row.kind].words.format(row.bar)} within the length available"
+        size = row.bar if row.other_bar in (None, row.bar) else f"{row.bar} and #{row.other_bar}"
+        what = f"{row.mark}: {_KINDS[row.kind].words.format(size)} within the length available"
         ratio = pad.verify(what, required.value, available, required.clause)
     result = CheckResult(
         mark=row.mark,

@@ -5,13 +5,13 @@ from __future__ import annotations
 from collections.abc import Iterator
 from typing import TypeVar
 
-from calcpack.aci318 import development, heads, laps
+from calcpack.aci318 import continuity, development, heads, laps
 from calcpack.aci318.bars import bar
 from calcpack.aci318.editions import Edition
 from calcpack.formula import Formula
 from calcpack.ledger import passes
 from calcpack.members.results import Requirement
-from calcpack.members.termination import TerminationLike
+from calcpack.members.termination import TerminationLike, diameter_of_bundle
 from calcpack.members.working import Choice, Working
 
 __all__ = ["requirements"]
@@ -29,19 +29,29 @@ _CLOSE_BARS = {
 
 def requirements(work: Working[T], row: TerminationLike, edition: Edition) -> tuple[Requirement, ...]:
     """Verify what the row shows of its provision's conditions; a condition not met is said in words as well."""
-    return (*_close_bars(work, row, edition), *_stated_c_b(work, row), *_head_clearances(work, row, edition))
+    return (
+        *_close_bars(work, row, edition),
+        *_stated_c_b(work, row),
+        *_head_clearances(work, row, edition),
+        *_at_support(work, row, edition),
+    )
 
 
 def _spacing(row: TerminationLike) -> float | None:
     """Centre-to-centre spacing, as stated or as the clear spacing gives it."""
     if row.spacing is not None:
         return row.spacing
-    return None if row.clear_spacing is None else row.clear_spacing + bar(row.bar).d_b
+    return None if row.clear_spacing is None else row.clear_spacing + diameter_of_bundle(row)
+
+
+def _diameter(work: Working[T], row: TerminationLike) -> T:
+    """What cover and spacing are measured from: the bar, or one bar of the bundle's area."""
+    return work.value("d_b" if row.bundle == 1 else "d_be")
 
 
 def _worked_spacing(work: Working[T], row: TerminationLike) -> T:
     if row.spacing is None and "s" not in work.values:
-        work.values["s"] = work.work(Choice(development.centre_spacing))
+        work.values["s"] = work.work(Choice(development.centre_spacing), d_b=_diameter(work, row))
     return work.value("s")
 
 
@@ -86,8 +96,8 @@ def _stated_c_b(work: Working[T], row: TerminationLike) -> Iterator[Requirement]
     if row.c_b is None or row.kind not in ("straight tension", "lap tension"):
         return
     if row.clear_cover is not None:
-        text = f"c_b = {row.c_b:,g} in, clear cover gives {row.clear_cover + bar(row.bar).d_b / 2:,g} in"
-        largest = work.work(Choice(development.c_b_by_cover))
+        text = f"c_b = {row.c_b:,g} in, clear cover gives {row.clear_cover + diameter_of_bundle(row) / 2:,g} in"
+        largest = work.work(Choice(development.c_b_by_cover), d_b=_diameter(work, row))
         yield _verified(work, row, "c_b stated, within the clear cover", (work.value("c_b"), largest), "2.2", text)
     spacing = _spacing(row)
     if spacing is not None:
@@ -109,3 +119,17 @@ def _head_clearances(work: Working[T], row: TerminationLike, edition: Edition) -
         text = f"bars at {spacing:,g} in centre to centre, at least {rule(d_b=d_b):,g} in"
         sides = (work.work(Choice(rule)), _worked_spacing(work, row))
         yield _verified(work, row, "spacing of headed bars", sides, _clause(rule, edition), text)
+
+
+def _at_support(work: Working[T], row: TerminationLike, edition: Edition) -> Iterator[Requirement]:
+    """Positive-moment bars at a simple support or a point of inflection."""
+    if row.M_n is None or row.V_u is None:
+        return
+    rule, reason = continuity.development_maximum_at_support, "Ends not confined by a reaction."
+    if row.confined_reaction:
+        rule, reason = continuity.development_maximum_confined, "Ends confined by a compressive reaction."
+    largest = work.work(Choice(rule, f"Simple support or point of inflection. {reason}"))
+    number = work.pad.number
+    text = f"l_d = {number(work.value('l_d')):,.4g} in, at most {number(largest):,.4g} in"
+    what = "development length at simple support or point of inflection"
+    yield _verified(work, row, what, (work.value("l_d"), largest), _clause(rule, edition), text)

@@ -1,33 +1,49 @@
-"""Which equation or factor serves a row of the anchorage schedule, and the reason that is printed beside it."""
+"""Which equation or factor serves a row of the anchorage schedule, and the reason that is printed beside it.
+
+Straight bars, hooks, heads and compression; laps and mechanical splices stand in `calcpack.members.anchorage_splices`.
+"""
 
 from __future__ import annotations
 
 from collections.abc import Callable, Mapping
 
-from calcpack.aci318 import compression, development, factors, heads, hooks, laps
-from calcpack.aci318.bars import bar
+from calcpack.aci318 import bundles, compression, development, factors, heads, hooks
 from calcpack.aci318.editions import Edition
-from calcpack.members.termination import TerminationLike
+from calcpack.formula import Formula
+from calcpack.members.anchorage_excess import reduces
+from calcpack.members.termination import TerminationLike, diameter_of_bundle
 from calcpack.members.working import Choice
 
 __all__ = [
-    "COMPRESSION_LAP_RULES",
     "COMPRESSION_RULES",
     "HEAD_RULES",
     "HOOK_RULES",
-    "LAP_RULES",
+    "JOINT_RULES",
     "STRAIGHT_RULES",
     "Rule",
+    "bundled",
 ]
 
 
 Rule = Callable[[TerminationLike, Edition], Choice | None]
 
 
+def bundled(row: TerminationLike) -> bool:
+    """Whether the bar is one of a bundle whose lengths are increased."""
+    return row.bundle > 2
+
+
+def _serving(edition: Edition, *formulas: Formula) -> Formula:
+    """The one of several formulas that stands in the edition."""
+    return next(one for one in formulas for clause in one.clauses if clause.standard == edition.standard)
+
+
 # Straight bars in tension
 
 
 def _straight_equation(row: TerminationLike, edition: Edition) -> Choice:
+    if row.c_b is not None and row.bundle > 1:
+        return Choice(_serving(edition, *_GENERAL_OF_BUNDLE), f"General equation: c_b is stated. {_AS_ONE_BAR}")
     if row.c_b is not None:
         return Choice(edition.straight_tension, "General equation: c_b is stated.")
     unstated = [name for name in ("clear cover", "clear spacing") if getattr(row, name.replace(" ", "_")) is None]
@@ -36,22 +52,31 @@ def _straight_equation(row: TerminationLike, edition: Edition) -> Choice:
     return _straight_table(row, edition)
 
 
+_GENERAL_OF_BUNDLE = (bundles.general_tension_of_bundle_14, bundles.general_tension_of_bundle_19)
+_AS_ONE_BAR = "A bundle counts as one bar of its area (25.6.1.6)."
+
+
 def _straight_table(row: TerminationLike, edition: Edition) -> Choice:
-    d_b = bar(row.bar).d_b
+    d_b, name = diameter_of_bundle(row), "d_b" if row.bundle == 1 else "d_be"
     cover, spacing = row.clear_cover or 0.0, row.clear_spacing or 0.0
-    facts = f"clear cover {cover:g} in = {cover / d_b:.2f} d_b, clear spacing {spacing:g} in = {spacing / d_b:.2f} d_b"
+    ratios = f"{cover / d_b:.2f} {name}", f"{spacing / d_b:.2f} {name}"
+    facts = f"clear cover {cover:g} in = {ratios[0]}, clear spacing {spacing:g} in = {ratios[1]}"
     if cover >= d_b and spacing >= 2 * d_b:
-        return Choice(edition.straight_tension_spaced, f"Table, first row: {facts}; at least d_b and 2 d_b.")
+        return Choice(edition.straight_tension_spaced, f"Table, first row: {facts}; at least {name} and 2 {name}.")
     if cover >= d_b and spacing >= d_b and row.confining_ties:
-        reason = f"Table, first row: {facts}; at least d_b each, with the least ties or stirrups along the bar."
+        reason = f"Table, first row: {facts}; at least {name} each, with the least ties or stirrups along the bar."
         return Choice(edition.straight_tension_spaced, reason)
     return Choice(edition.straight_tension_other, f"Table, other cases: {facts}.")
 
 
-def _straight_length(row: TerminationLike, _edition: Edition) -> Choice:
-    if row.A_s_required is None:
-        return Choice(development.straight_tension_minimum)
-    return Choice(development.straight_tension_reduced, _EXCESS)
+def _straight_length(row: TerminationLike, edition: Edition) -> Choice:
+    if bundled(row):
+        if reduces(row, edition):
+            return Choice(bundles.bundled_tension_reduced, _EXCESS)
+        return Choice(bundles.bundled_tension)
+    if reduces(row, edition):
+        return Choice(development.straight_tension_reduced, _EXCESS)
+    return Choice(development.straight_tension_minimum)
 
 
 _EXCESS = (
@@ -68,13 +93,16 @@ def _casting(row: TerminationLike, _edition: Edition) -> Choice:
 def _coating_straight(row: TerminationLike, _edition: Edition) -> Choice:
     if row.coating in ("none", "zinc"):
         return Choice(factors.uncoated, _coating_words(row))
+    one = row.bundle == 1
     if row.clear_cover is not None and row.clear_spacing is not None:
-        return Choice(factors.coated_bar, _coating_words(row))
+        return Choice(factors.coated_bar if one else bundles.coated_bundle, _coating_words(row))
     if row.c_b is None:
         reason = f"{_coating_words(row)} Clear cover or clear spacing not stated: the smaller factor cannot be claimed."
         return Choice(factors.coated_bar_unknown, reason)
+    name = "d_b" if one else "d_be"
     return Choice(
-        factors.coated_bar_by_c_b, f"{_coating_words(row)} c_b is below 3.5 d_b where cover or spacing is short."
+        factors.coated_bar_by_c_b if one else bundles.coated_bundle_by_c_b,
+        f"{_coating_words(row)} c_b is below 3.5 {name} where cover or spacing is short.",
     )
 
 
@@ -90,6 +118,14 @@ def _grade(_row: TerminationLike, edition: Edition) -> Choice | None:
     return Choice(edition.grade_factor) if edition.grade_factor else None
 
 
+def _equivalent_diameter(_row: TerminationLike, _edition: Edition) -> Choice:
+    return Choice(bundles.equivalent_diameter)
+
+
+def _bundle_factor(_row: TerminationLike, _edition: Edition) -> Choice:
+    return Choice(bundles.bundle_factor)
+
+
 STRAIGHT_RULES: Mapping[str, Rule] = {
     "l_d": _straight_length,
     "l_d_a": _straight_equation,
@@ -97,6 +133,8 @@ STRAIGHT_RULES: Mapping[str, Rule] = {
     "psi_e": _coating_straight,
     "psi_s": _size,
     "psi_g": _grade,
+    "d_be": _equivalent_diameter,
+    "k_bundle": _bundle_factor,
 }
 
 
@@ -113,7 +151,7 @@ def _centre_spacing(row: TerminationLike, _edition: Edition) -> Choice | None:
 
 
 def _hook_length(row: TerminationLike, edition: Edition) -> Choice:
-    if row.A_s_required is not None and edition.hook_reduced is not None:
+    if edition.hook_reduced is not None and reduces(row, edition):
         return Choice(edition.hook_reduced, _EXCESS)
     return Choice(hooks.hook_minimum)
 
@@ -221,10 +259,14 @@ HEAD_RULES: Mapping[str, Rule] = {
 # Compression
 
 
-def _compression_length(row: TerminationLike, _edition: Edition) -> Choice:
-    if row.A_s_required is None:
-        return Choice(compression.compression_minimum)
-    return Choice(compression.compression_reduced, _EXCESS)
+def _compression_length(row: TerminationLike, edition: Edition) -> Choice:
+    if bundled(row):
+        if reduces(row, edition):
+            return Choice(bundles.bundled_compression_reduced, _EXCESS)
+        return Choice(bundles.bundled_compression)
+    if reduces(row, edition):
+        return Choice(compression.compression_reduced, _EXCESS)
+    return Choice(compression.compression_minimum)
 
 
 def _compression_equation(_row: TerminationLike, _edition: Edition) -> Choice:
@@ -232,7 +274,7 @@ def _compression_equation(_row: TerminationLike, _edition: Edition) -> Choice:
 
 
 def _compression_ties(row: TerminationLike, _edition: Edition) -> Choice:
-    if row.confining_ties:
+    if row.confining_ties or row.spiral:
         return Choice(factors.ties_in_compression, "Inside a spiral or close ties, as scheduled.")
     return Choice(factors.without_ties_in_compression, "No spiral or close ties scheduled.")
 
@@ -241,35 +283,27 @@ COMPRESSION_RULES: Mapping[str, Rule] = {
     "l_dc": _compression_length,
     "l_dc_a": _compression_equation,
     "psi_r": _compression_ties,
+    "k_bundle": _bundle_factor,
 }
 
 
-# Laps
+# Joints of special moment frames
 
 
-def _lap_class(row: TerminationLike, _edition: Edition) -> Choice:
-    if row.lap_class == "A":
-        return Choice(
-            laps.lap_class_a, "Class A, as scheduled: twice the area required, at most half the bars spliced."
-        )
-    return Choice(laps.lap_class_b, "Class B, as scheduled." if row.lap_class else "Class B: class not stated.")
+def _joint_hook(_row: TerminationLike, _edition: Edition) -> Choice:
+    return Choice(hooks.joint_hook, "In the confined core of the joint of a special moment frame, as scheduled.")
 
 
-LAP_RULES: Mapping[str, Rule] = {**STRAIGHT_RULES, "l_st": _lap_class}
+def _joint_straight(row: TerminationLike, _edition: Edition) -> Choice:
+    reason = "Through the confined core of the joint of a special moment frame, as scheduled."
+    return Choice(hooks.joint_straight_top if row.top else hooks.joint_straight, reason)
 
 
-def _lap_compression_length(row: TerminationLike, _edition: Edition) -> Choice:
-    if row.confining_ties:
-        return Choice(laps.lap_in_ties, "Column ties of 0.0015 h s or more in both directions, as scheduled.")
-    return Choice(laps.lap_without_reduction, "No reduction for column ties or spiral.")
+def _joint_equation(_row: TerminationLike, _edition: Edition) -> Choice:
+    return Choice(hooks.joint_hook_uncoated)
 
 
-def _lap_compression_equation(row: TerminationLike, _edition: Edition) -> Choice:
-    return Choice(laps.lap_compression_high_grade if row.f_y > 80_000 else laps.lap_compression)
-
-
-COMPRESSION_LAP_RULES: Mapping[str, Rule] = {
-    **LAP_RULES,
-    "l_sc": _lap_compression_length,
-    "l_sc_a": _lap_compression_equation,
+JOINT_RULES: Mapping[str, Mapping[str, Rule]] = {
+    "hook 90": {"l_dh": _joint_hook, "l_dh_j": _joint_equation, "psi_e": _coating_hook},
+    "straight tension": {"l_d": _joint_straight, "l_dh_j": _joint_equation, "psi_e": _coating_straight},
 }

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
+from math import cos, sin
 from typing import TypeVar
 
 from calcpack.aci318 import stress_block
@@ -15,6 +16,7 @@ from calcpack.tabulation import Above, Column, Row, Tabulation, Worked
 __all__ = ["Axes", "NeutralAxis", "bending_axes", "step", "work_block"]
 
 T = TypeVar("T")
+_PARALLEL = 1e-6
 
 
 @dataclass(frozen=True)
@@ -23,6 +25,14 @@ class NeutralAxis:
 
     theta: float
     c: float
+
+    def fits(self, axes: Axes) -> bool:
+        """Whether it is parallel to the axis about which alone a load bends.
+
+        It need not be: a row of bars on the edge of the block, some inside and some not, turns it.
+        """
+        off = {"x": cos(self.theta), "y": sin(self.theta), "": 0.0}[axes.name]
+        return abs(off) < _PARALLEL
 
 
 @dataclass(frozen=True)

@@ -8,7 +8,7 @@ from typing import TypeVar
 
 from calcpack.members.column_axial import AXIAL_STEPS
 from calcpack.members.column_bending import work_ray, work_strength, work_tension
-from calcpack.members.column_block import NeutralAxis, bending_axes
+from calcpack.members.column_block import Axes, NeutralAxis, bending_axes
 from calcpack.members.column_charts import draw_charts, draw_section
 from calcpack.members.column_like import ForceLike, StoryLike
 from calcpack.members.column_reciprocal import work_reciprocal
@@ -93,6 +93,8 @@ def _show_neutral_axis(work: ColumnWorking[T], checked: Interaction, point: Poin
     number = work.pad.number
     axes = bending_axes(work.column, number(point.Mx), number(point.My))
     axis = NeutralAxis(*checked.neutral_axis)
+    if not axis.fits(axes):
+        axes = Axes("", axes.circular)
     acting = {"x": {"M_ux": point.Mx}, "y": {"M_uy": point.My}, "": {"M_ux": point.Mx, "M_uy": point.My}}
     strength = work_strength(work, axis, axes, {"P_u": point.P, **acting[axes.name]})
     a = number(strength.values["a"])

@@ -15,6 +15,9 @@ from calcpack.members.column_slenderness import slender_problems
 __all__ = ["refuse_problems"]
 
 
+_HIGHEST = Limit("f_c", "as far as the stress block is used here", high=20_000)
+
+
 def refuse_problems(column: ColumnLike, edition: Edition) -> None:
     """Raise everything that is wrong with a column, at once.
 
@@ -45,7 +48,12 @@ def _sizes(column: ColumnLike) -> Iterator[Problem]:
 def _materials(column: ColumnLike, edition: Edition) -> Iterator[Problem]:
     high = Limit("f_y", f"{edition.name} Table 20.2.2.4a", high=edition.f_y_max)
     spiral = Limit("f_yt", f"{edition.name} 25.7.3.3", high=100_000)
-    values = [("f_c", column.f_c, CONCRETE), ("f_y", column.f_y, YIELD_LEAST), ("f_y", column.f_y, high)]
+    values = [
+        ("f_c", column.f_c, CONCRETE),
+        ("f_c", column.f_c, _HIGHEST),
+        ("f_y", column.f_y, YIELD_LEAST),
+        ("f_y", column.f_y, high),
+    ]
     if column.f_yt is not None:
         values += [("f_yt", column.f_yt, YIELD_LEAST), ("f_yt", column.f_yt, spiral)]
     for name, value, limit in values:

@@ -37,6 +37,7 @@ _TENSION = (
     "Not used: with one of the eccentricities alone the nominal axial strength is below that, and bending governs."
 )
 _NO_MOMENT = "Not used: one of the eccentricities is so small that the strength is that of axial force alone."
+_TURNED = "Not used: bars on the edge of the block turn the neutral axis of one of the eccentricities alone."
 _INSIDE = "Within its band of 10 %: the neutral axis above is no gross mistake. This is no part of the design check."
 _OUTSIDE = "Outside its band of 10 %: look at the neutral axis above, and at how far the bars are from symmetric."
 
@@ -55,6 +56,9 @@ def work_reciprocal(work: ColumnWorking[T], checked: Interaction, strength: Stre
         return
     if any(isnan(found.theta) for found, _ in alone.values()):
         work.pad.reason(_NO_MOMENT)
+        return
+    if not all(found.fits(Axes(axis, False)) for axis, (found, _) in alone.items()):
+        work.pad.reason(_TURNED)
         return
     P_nx = _about(work, "x", alone["x"][0], v)
     P_ny = _about(work, "y", alone["y"][0], v)

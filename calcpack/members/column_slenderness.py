@@ -232,7 +232,8 @@ class _Checks(Generic[T]):
         else:
             clause = self.work.clause(slenderness.magnifier_nonsway)
             P_u, capacity = bent.values["P_u"], bent.values["P_c_reduced"]
-            ratio = self.work.verify(f"axial force within 0.75 of the critical load, bending about {bent.axis}", P_u, capacity, clause)
+            what = f"axial force within 0.75 of the critical load, bending about {bent.axis}"
+            ratio = self.work.verify(what, P_u, capacity, clause)
         return self._result("stability", clause, ratio, bent, one, met=ratio < 1)
 
     def _second_order(self) -> CheckResult:

@@ -92,7 +92,14 @@ def assumptions(tables: Sequence[Strengths], basis: Basis, edition: Edition) -> 
 
 def _general(basis: Basis, edition: Edition) -> Iterator[str]:
     yield (
-        f"Lengths by {edition.name}, minima included, each rounded up to the next multiple of {basis.increment:g} in. "
+        "Symbols: l_d straight bars in tension, l_dh hooks, l_dt headed bars, l_dc bars in compression, l_st tension "
+        "laps of class A and B, l_sc compression laps."
+    )
+    yield (
+        f"Lengths by {edition.name}, minima included, each rounded up to the next multiple of {basis.increment:g} in; "
+        "an excess of a billionth counts as none."
+    )
+    yield (
         "They develop f_y: no reduction for excess reinforcement, no bundled bars, no special seismic system "
         "(25.4.10, 25.6, chapter 18)."
     )
@@ -126,7 +133,11 @@ def _straight(tables: Sequence[Strengths], basis: Basis, edition: Edition) -> It
 
 
 def _hooks(ends: EndConditions, edition: Edition) -> Iterator[str]:
-    ties = "ties or stirrups at 3 d_b or closer" if edition.hook_by_cover else "ties or stirrups of A_th = 0.4 A_hs or more"
+    ties = (
+        "ties or stirrups at 3 d_b or closer"
+        if edition.hook_by_cover
+        else "ties or stirrups of A_th = 0.4 A_hs or more"
+    )
     counted = edition.hook_by_cover and ends.tail_cover is not None
     tail = f", cover of {ends.tail_cover} or more on the extension of a 90° hook" if counted else ""
     yield f"Standard hooks (25.3.1, 25.4.3): {_side(ends)}{tail}; {_confinement(ends, ties)}{_core(ends, edition)}."

@@ -56,21 +56,25 @@ def rounded_up(*, l_required: Length, l_increment: Length) -> Length:
 
 @dataclass(frozen=True)
 class LengthColumn:
-    """A column: the kind of end, the symbol of its length, words for its head, and what its rows state."""
+    """A column: the kind of end, the symbol of its length, words for its head, and what its rows state.
+
+    `name` says the same without the symbol.
+    """
 
     kind: str
     symbol: str
     words: str
+    name: str
     states: Mapping[str, Any] = field(default_factory=dict)
 
 
-def _column(kind: str, symbol: str, words: str, **states: Any) -> LengthColumn:
-    return LengthColumn(kind, symbol, words, states)
+def _column(kind: str, symbol: str, words: str, name: str = "", **states: Any) -> LengthColumn:
+    return LengthColumn(kind, symbol, words, name or words, states)
 
 
 COLUMNS = (
-    _column("straight tension", "l_d", "straight, top", top=True),
-    _column("straight tension", "l_d", "straight, other"),
+    _column("straight tension", "l_d", "top", "straight, top", top=True),
+    _column("straight tension", "l_d", "other", "straight, other"),
     _column("hook 90", "l_dh", "hook 90°"),
     _column("hook 180", "l_dh", "hook 180°"),
     _column("headed", "l_dt", "headed"),
@@ -79,7 +83,7 @@ COLUMNS = (
     _column("lap tension", "l_st", "lap A, other", lap_class="A"),
     _column("lap tension", "l_st", "lap B, top", lap_class="B", top=True),
     _column("lap tension", "l_st", "lap B, other", lap_class="B"),
-    _column("lap compression", "l_sc", "compr. lap"),
+    _column("lap compression", "l_sc", "compr. lap", "compression lap"),
 )
 
 
@@ -103,7 +107,7 @@ class LengthTable(Generic[T]):
 def row_for(column: LengthColumn, size: int, strengths: Strengths, basis: Basis, edition: Edition) -> Termination:
     """The row of an anchorage schedule that a cell stands for."""
     return Termination(
-        mark=f"#{size} {column.words}", kind=column.kind, bar=size, f_c=strengths.f_c, f_y=strengths.f_y,
+        mark=f"#{size} {column.name}", kind=column.kind, bar=size, f_c=strengths.f_c, f_y=strengths.f_y,
         lamb=strengths.lamb, coating=strengths.coating, file=basis.source,
         **{**_CONDITIONS[column.kind](size, basis), **_apart(column, size, strengths, basis, edition)}, **column.states,
     )  # fmt: skip
@@ -151,7 +155,7 @@ _CONDITIONS: Mapping[str, Any] = {
     "hook 90": lambda size, basis: {**_ends(size, basis.hooks), **_tail(size, basis.hooks)},
     "hook 180": lambda size, basis: _ends(size, basis.hooks),
     "headed": lambda size, basis: _ends(size, basis.heads),
-    "straight compression": lambda size, basis: {"confining_ties": basis.confined},
+    "straight compression": lambda _size, basis: {"confining_ties": basis.confined},
     # Above Grade 80 a compression lap is compared with the tension lap, which asks for cover and spacing.
     "lap compression": lambda size, basis: {**_bars(size, basis), "confining_ties": basis.lap_ties},
 }
@@ -199,7 +203,7 @@ def work_lengths(
     for size, cells in rows.items():
         for column in COLUMNS:
             row = row_for(column, size, strengths, basis, edition)
-            pad.heading(f"#{size} {column.words}")
+            pad.heading(f"#{size} {column.name}")
             try:
                 cells.append(LengthCell(*work_column(pad, row, increment, edition)))
             except RangeError as error:

@@ -2,12 +2,24 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
-from typing import Protocol
+from dataclasses import dataclass, fields
+from typing import Any, Protocol
 
+from calcpack.aci318.bars import bar
+from calcpack.aci318.bundles import equivalent_diameter
 from calcpack.members.sources import position, source_text
 
-__all__ = ["COATINGS", "KINDS", "Termination", "TerminationLike", "place", "row_of"]
+__all__ = [
+    "COATINGS",
+    "EXCLUSIONS",
+    "KINDS",
+    "Termination",
+    "TerminationLike",
+    "diameter_of_bundle",
+    "place",
+    "row_of",
+    "termination_of",
+]
 
 KINDS = (
     "straight tension",
@@ -17,8 +29,10 @@ KINDS = (
     "straight compression",
     "lap tension",
     "lap compression",
+    "mechanical splice",
 )
 COATINGS = ("none", "epoxy", "zinc", "dual")
+EXCLUSIONS = ("noncontinuous support", "f_y required", "continuous bars", "seismic")
 
 
 class TerminationLike(Protocol):
@@ -130,6 +144,61 @@ class TerminationLike(Protocol):
         ...
 
     @property
+    def bundle(self) -> int:
+        """Bars in the bundle, 1 for a bar by itself."""
+        ...
+
+    @property
+    def spliced(self) -> float | None:
+        """Share of the bars spliced within the lap length."""
+        ...
+
+    @property
+    def other_bar(self) -> int | None:
+        """Designation number of the bar it is lapped with, where that is of another size."""
+        ...
+
+    @property
+    def bar_stress(self) -> float | None:
+        """Of column bars at the splice: tensile stress under factored loads over f_y."""
+        ...
+
+    @property
+    def spiral(self) -> bool:
+        """The bar lies inside a column's spiral."""
+        ...
+
+    @property
+    def M_n(self) -> float | None:
+        """At a simple support or inflection, all bars stressed to f_y, lb*in."""
+        ...
+
+    @property
+    def V_u(self) -> float | None:
+        """There, lb."""
+        ...
+
+    @property
+    def l_a(self) -> float | None:
+        """Embedment past the centre of support or the inflection, in."""
+        ...
+
+    @property
+    def confined_reaction(self) -> bool:
+        """A compressive reaction confines the ends of the bars."""
+        ...
+
+    @property
+    def joint(self) -> str:
+        """Special, in the joint of a special moment frame; empty elsewhere."""
+        ...
+
+    @property
+    def excess_exclusion(self) -> str:
+        """One of `EXCLUSIONS` that rules out the reduction for excess reinforcement, or empty."""
+        ...
+
+    @property
     def source(self) -> str:
         """Drawing and revision that the row states; may be empty."""
         ...
@@ -170,9 +239,32 @@ class Termination:
     lap_class: str | None = None
     available: float | None = None
     spacing: float | None = None
+    bundle: int = 1
+    spliced: float | None = None
+    other_bar: int | None = None
+    bar_stress: float | None = None
+    spiral: bool = False
+    M_n: float | None = None
+    V_u: float | None = None
+    l_a: float | None = None
+    confined_reaction: bool = False
+    joint: str = ""
+    excess_exclusion: str = ""
     source: str = ""
     file: str = ""
     row: int = 0
+
+
+def termination_of(row: TerminationLike, **changes: Any) -> Termination:
+    """A row with some of its values changed, for what is worked beside the row itself."""
+    values = {field.name: getattr(row, field.name) for field in fields(Termination)}
+    return Termination(**{**values, **changes})
+
+
+def diameter_of_bundle(row: TerminationLike) -> float:
+    """The diameter that counts for cover, spacing and confinement: of the bar, or of one bar of the bundle's area."""
+    one = bar(row.bar)
+    return one.d_b if row.bundle == 1 else equivalent_diameter(A_b=one.A_b, n_bundle=float(row.bundle))
 
 
 def row_of(row: TerminationLike) -> str:

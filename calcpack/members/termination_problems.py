@@ -9,13 +9,15 @@ from calcpack.aci318.editions import Edition
 from calcpack.aci318.limits import CONCRETE, YIELD_LEAST
 from calcpack.errors import Problem, RangeError
 from calcpack.formula import Limit
-from calcpack.members.termination import COATINGS, KINDS, TerminationLike, row_of
+from calcpack.members.termination import COATINGS, EXCLUSIONS, KINDS, TerminationLike, row_of
+from calcpack.members.termination_claims import claims
 
 __all__ = ["refuse_problems"]
 
 _LARGEST = 1e30
 _SMALLEST = 1e-9
 _LENGTHS = ("c_b", "clear_cover", "clear_spacing", "side_cover", "tail_cover", "available", "spacing")
+_NOT_NEGATIVE = {"K_tr": "25.4.2", "l_a": "9.7.3.8.3"}
 _BY_TEST = ("straight tension", "lap tension", "straight compression")
 
 
@@ -27,6 +29,7 @@ def refuse_problems(row: TerminationLike, edition: Edition) -> None:
     RangeError : a value outside the range of its clause, or one that the check needs and that is missing
     """
     problems = [*_words(row), *_sizes(row), *_materials(row, edition), *_lengths(row), *_areas(row)]
+    problems += claims(row, edition)
     if problems:
         raise RangeError(f"{row.mark}: {row.kind}", problems, row_of(row))
 
@@ -38,16 +41,25 @@ def _words(row: TerminationLike) -> Iterator[Problem]:
         yield Problem(f"coating = {row.coating!r}", f"one of {', '.join(COATINGS)}")
     if row.lap_class not in (None, "A", "B"):
         yield Problem(f"lap_class = {row.lap_class!r}", "A, B or blank")
+    if row.joint not in ("", "special"):
+        yield Problem(f"joint = {row.joint!r}", "special or blank")
+    if row.excess_exclusion and row.excess_exclusion not in EXCLUSIONS:
+        yield Problem(f"excess_exclusion = {row.excess_exclusion!r}", f"one of {', '.join(EXCLUSIONS)} (25.4.10.2)")
 
 
 def _sizes(row: TerminationLike) -> Iterator[Problem]:
     if row.bar not in BARS:
         allowed = ", ".join(f"#{size}" for size in BARS)
         yield Problem(f"bar = #{row.bar}", f"one of {allowed} (ASTM A615, A706)")
-    elif row.bar > NO_11.size and row.kind in _TO_NO_11:
+    elif row.bar > NO_11.size and row.kind in _TO_NO_11 and not _lapped_to_smaller(row):
         yield Problem(
             f"bar = #{row.bar}", f"#11 and smaller ({_TO_NO_11[row.kind]})", "use another anchorage or splice"
         )
+
+
+def _lapped_to_smaller(row: TerminationLike) -> bool:
+    """Whether a large bar is lapped in compression with a smaller one, 25.5.5.3."""
+    return row.kind == "lap compression" and row.other_bar in BARS and (row.other_bar or 0) <= NO_11.size
 
 
 _TO_NO_11 = {"headed": "25.4.4.1", "lap tension": "25.5.1.1", "lap compression": "25.5.1.1"}
@@ -60,7 +72,15 @@ def _materials(row: TerminationLike, edition: Edition) -> Iterator[Problem]:
     if row.kind == "headed":
         high, clause = edition.head_f_y_max, "25.4.4.1"
     yield from _limited("f_y", row.f_y, "psi", Limit("f_y", f"{edition.name} {clause}", high=high))
+    if YIELD_LEAST.low <= row.f_y <= high and not any(abs(row.f_y / grade - 1) <= _ROUNDED for grade in _GRADES):
+        allowed = f"a grade of ASTM A615 or A706: {', '.join(f'{grade:,} psi' for grade in _GRADES)} (20.2.1.3)"
+        yield Problem(f"f_y = {row.f_y:,g} psi", allowed, "state the grade of the bars")
     yield from _lightweight(row, edition)
+
+
+# Grade 75 is one of the editions of A615 before 2018. Metric grades are up to 2 % off: Grade 420 is 60,916 psi.
+_GRADES = (40_000, 60_000, 75_000, 80_000, 100_000)
+_ROUNDED = 0.02
 
 
 def _lightweight(row: TerminationLike, edition: Edition) -> Iterator[Problem]:
@@ -108,8 +128,10 @@ def _lengths(row: TerminationLike) -> Iterator[Problem]:
         value = getattr(row, name)
         if value is not None and not _SMALLEST <= value <= _LARGEST:
             yield Problem(f"{name} = {value:,g} in", "a length above zero", "correct it, or leave it blank")
-    if row.K_tr != 0 and not _SMALLEST <= row.K_tr <= _LARGEST:
-        yield Problem(f"K_tr = {row.K_tr:,g} in", "a length, zero or more (25.4.2)")
+    for name, clause in _NOT_NEGATIVE.items():
+        value = getattr(row, name)
+        if value is not None and value != 0 and not _SMALLEST <= value <= _LARGEST:
+            yield Problem(f"{name} = {value:,g} in", f"a length, zero or more ({clause})")
     if row.c_b is not None and row.bar in BARS and _SMALLEST <= row.c_b <= BARS[row.bar].d_b / 2:
         yield Problem(
             f"c_b = {row.c_b:,g} in", f"above d_b/2 = {BARS[row.bar].d_b / 2:,g} in: it runs to the bar centre"

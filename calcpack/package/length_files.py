@@ -78,16 +78,14 @@ def _rows(schedule: Schedule, table: LengthTable[float]) -> Iterator[tuple[str, 
 
 def _aligned(rows: Sequence[Sequence[str]]) -> list[str]:
     widths = [max(map(len, column)) for column in zip(*rows, strict=True)]
-    return [
-        "  ".join([row[0].ljust(widths[0]), *map(str.rjust, row[1:], widths[1:])]).rstrip() for row in rows
-    ]
+    return ["  ".join([row[0].ljust(widths[0]), *map(str.rjust, row[1:], widths[1:])]).rstrip() for row in rows]
 
 
 def to_csv(schedule: Schedule) -> bytes:
     """One row for each bar of each table; a cell without a length is empty, and the last column names its notes."""
     out = io.StringIO()
     writer = csv.writer(out, lineterminator="\r\n")
-    lengths = [f"{column.symbol} {column.words} [in]" for column in COLUMNS]
+    lengths = [f"{column.symbol} {column.words.replace('°', '')} [in]" for column in COLUMNS]
     writer.writerow(["f_c [psi]", "f_y [psi]", "coating", "lambda", "bar", *lengths, "notes"])
     for table in schedule.tables:
         one = table.strengths
@@ -97,7 +95,7 @@ def to_csv(schedule: Schedule) -> bytes:
             why = [number for cell in cells for number in cell.notes]
             said = " ".join(schedule.notes[number - 1] for number in dict.fromkeys(why))
             writer.writerow([*stated, f"#{size}", *shown, said])
-    return out.getvalue().encode("utf-8-sig")
+    return out.getvalue().encode()
 
 
 def _plain(schedule: Schedule, value: float) -> str:
@@ -106,7 +104,7 @@ def _plain(schedule: Schedule, value: float) -> str:
 
 
 def to_xlsx(schedule: Schedule) -> bytes:
-    """A worksheet for each table, laid out as it is printed, and one with the notes; the same bytes for the same job."""
+    """A worksheet for each table, laid out as it is printed, and one of notes; the same bytes for the same job."""
     from openpyxl import Workbook
 
     book = Workbook()

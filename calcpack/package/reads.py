@@ -31,7 +31,7 @@ class Inputs:
     job: Job
 
     def digest(self, key: str) -> str:
-        """The digest of what `key` names: ``job codes``, ``job settings``, ``givens q``, ``anchorage T1``, ``forces C1``."""
+        """The digest of what `key` names: ``job codes``, ``job lengths``, ``givens q``, ``anchorage T1``."""
         kind, _, name = key.partition(" ")
         if (kind, name) == ("job", "lengths"):
             return repr(lengths_of(self.job))

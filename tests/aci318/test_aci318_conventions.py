@@ -128,6 +128,7 @@ TYPICAL = {
         lambda_s 0.798, A_s 4.74, A_bt 0.31, n_legs 4, n_x 4, n_y 5, n_legs_x 4, n_legs_y 3, n_l 10, h_max 28.5
         h_x 7.417, s_o 6, b_c 21.375, A_sh 1.24, k_f 1.08, k_n 1.25
         n 4, n_bars 12, n_face 4, l_d_a 35.5756, l_dh_a 18.9737, l_dt_a 14.3568, l_dc_a 20.3251, l_sc_a 33.84
+        l_d 35.5756, l_dh_j 14.2346, l_core 20.5
         l_st 46.2483, psi_t 1.3, psi_e 1.2, psi_s 0.8, psi_g 1.15, psi_c 0.867, psi_r 0.75, psi_o 1.25, psi_p 1.6
         """.strip().split("\n")
         for pair in line.strip().split(", ")

@@ -251,7 +251,8 @@ def test_byte_order_mark_is_no_problem(job_root: Path) -> None:
             "[units]",
             "[firm]\nx = 1\n[units]",
             "unknown key 'firm'",
-            "'job', 'codes', 'units', 'loads', 'columns', 'people', 'revision', 'basis', 'limit' or 'deferred'",
+            "'job', 'codes', 'units', 'loads', 'columns', 'lengths', 'people', 'revision', 'basis', 'limit' "
+            "or 'deferred'",
             "remove it",
             "",
         ),

@@ -84,6 +84,17 @@ def test_termination_defaults(put: Put) -> None:
         A_s_provided=None,
         lap_class=None,
         available=None,
+        bundle=1,
+        spliced=None,
+        other_bar=None,
+        bar_stress=None,
+        spiral=False,
+        M_n=None,
+        V_u=None,
+        l_a=None,
+        confined_reaction=False,
+        joint="",
+        excess_exclusion="",
         member="",
         location="",
         source="",
@@ -109,11 +120,59 @@ def test_every_column_of_a_termination(put: Put) -> None:
     assert (found.member, found.location, found.source) == ("B4", "grid C, level 2", "S-301")
 
 
+def test_columns_beyond_the_contract(put: Put) -> None:
+    more = (
+        "bundle,spliced,other_bar,bar_stress,spiral,M_n [kip*ft],V_u [kip],l_a [in],confined_reaction,joint,"
+        "excess_exclusion"
+    )
+    cells = "3,50%,#9,0.4,yes,200,80,0,yes,special,seismic"
+    (found,) = read_terminations(put("anchorage.csv", anchorage(cells, more=more)))
+    assert (found.bundle, found.spliced, found.other_bar, found.bar_stress, found.spiral) == (3, 0.5, 9, 0.4, True)
+    assert (found.M_n, found.V_u, found.l_a) == (2_400_000.0, 80_000.0, 0.0)
+    assert (found.confined_reaction, found.joint, found.excess_exclusion) == (True, "special", "seismic")
+
+
+@pytest.mark.parametrize(
+    ("text", "share"), [("50%", 0.5), ("50 %", 0.5), ("0.5", 0.5), (".25", 0.25), ("100%", 1.0), ("1", 1.0), ("0", 0.0)]
+)
+def test_a_share_is_written_in_per_cent_or_as_a_fraction(text: str, share: float, put: Put) -> None:
+    assert read_terminations(put("anchorage.csv", anchorage(text, more="spliced")))[0].spliced == share
+
+
+@pytest.mark.parametrize(
+    ("column", "text", "remedy"),
+    [
+        ("spliced", "50", "above all of it: was this meant to be 50%?"),
+        ("spliced", "101%", "above all of it: was this meant to be 101%?"),
+        ("spliced", "half", "write 50% or 0.5"),
+        ("bar_stress", "-0.4", "write 50% or 0.5"),
+        ("bundle", "5", "a bundle holds up to four bars (25.6.1.1)"),
+        ("bundle", "1.5", "a bundle holds up to four bars (25.6.1.1)"),
+        ("other_bar", "9", "write the size as #8"),
+    ],
+)
+def test_what_the_further_columns_refuse(column: str, text: str, remedy: str, put: Put) -> None:
+    root = put("anchorage.csv", anchorage(text, more=column))
+    assert [said for _, said in remedies_of(read_terminations, root)] == [remedy]
+
+
+def test_the_exclusions_of_the_schedule_are_those_of_the_checks() -> None:
+    from calcpack.job import schedules
+    from calcpack.members import termination
+
+    assert (schedules.KINDS, schedules.COATINGS, schedules.EXCLUSIONS) == (
+        termination.KINDS,
+        termination.COATINGS,
+        termination.EXCLUSIONS,
+    )
+
+
 def test_the_kinds_and_coatings_of_the_contract(put: Put) -> None:
     rows = [f"{kind}-{coat},{kind},#11,4000,60000,{coat}" for kind in KINDS for coat in COATINGS]
     found = read_terminations(put("anchorage.csv", "\n".join([f"{ANCHORAGE},coating", *rows])))
     assert [f"{each.kind}-{each.coating}" for each in found] == [each.mark for each in found]
-    assert len(KINDS) == 7
+    # Those of the contract, and one more.
+    assert KINDS[7:] == ("mechanical splice",)
     assert len(COATINGS) == 4
 
 
@@ -172,8 +231,8 @@ def test_what_anchorage_allows_is_said(put: Put) -> None:
     rows = ["A1,hook 45,8,4000,60000", "A2,headed,#12,4000,60000"]
     assert remedies_of(read_terminations, put("anchorage.csv", "\n".join([ANCHORAGE, *rows]))) == [
         (
-            "'straight tension', 'hook 90', 'hook 180', 'headed', 'straight compression', 'lap tension' or "
-            "'lap compression'",
+            "'straight tension', 'hook 90', 'hook 180', 'headed', 'straight compression', 'lap tension', "
+            "'lap compression' or 'mechanical splice'",
             "did you mean 'hook 90'?",
         ),
         ("a bar size, #3 to #11, #14 or #18", "write the size as #8"),

@@ -31,6 +31,8 @@ def accepted(column: Column, one: Edition) -> bool:
         ({"f_c": 2_499.0}, False),
         ({"f_c": 2_500.0}, True),
         ({"f_c": 2_501.0}, True),
+        ({"f_c": 20_000.0}, True),
+        ({"f_c": 20_001.0}, False),
         ({"f_y": 39_999.0}, False),
         ({"f_y": 40_000.0}, True),
         ({"cover": 0.0}, False),
@@ -114,3 +116,8 @@ def test_sizes_that_are_not_made(size: int, name: str | None, each: Edition) -> 
     else:
         with pytest.raises(RangeError, match=rf"{name}: #{size} +one of #3, #4, .*#18 \(ASTM A615, A706\)"):
             check(column, FORCES, Context(each))
+
+
+def test_strength_beyond_what_the_stress_block_is_used_for() -> None:
+    with pytest.raises(RangeError, match=r"f_c = 20,001 psi +allowed up to 20,000 psi"):
+        check(replace(TIED, f_c=20_001.0), FORCES, Context(edition("ACI 318-19")))

@@ -316,6 +316,39 @@ def test_odd_bars_on_a_circle_bend_about_y_alone(recording: Any) -> None:
     assert [one.symbol for one in pad.solutions] == ["c"]
 
 
+def test_bars_on_the_edge_of_the_block_turn_the_neutral_axis(steps: Any) -> None:
+    # Regression: bending about x alone, a row of five bars on the edge of the block. With all inside or none, the
+    # axial forces do not balance; an axis turned by a degree, with some inside, does, and is the smallest strength.
+    row_of_five = Column("C", 14.0, 20.0, Bars(16, 9, 5, 5), Ties("ties", 4, 12.0), 1.5, 10_000.0, 40_000.0)
+    result = work_column(steps, row_of_five, [Force("a", 0.0, -80.0 * FT)], Context(E19))[0]
+    assert [one.symbol for one in steps.solutions] == ["theta", "c"]
+    assert 0.001 < abs(math.cos(steps.values["theta"])) < 0.1
+    assert of_ray(steps)[0].ratio == pytest.approx(result.ratio, rel=1e-8)
+    assert steps.values["M_ny"] == pytest.approx(0.0, abs=1e-8 * abs(steps.values["M_nx"]))
+    (bars,) = [one.made.rows for one in steps.tables if one.table.title.startswith("Bars")]
+    assert {row["d_s"] < steps.values["a"] for row in bars if row["y"] == min(one["y"] for one in bars)} == {
+        True,
+        False,
+    }
+
+
+@pytest.mark.parametrize(
+    ("theta", "name", "fits"),
+    [
+        (math.pi / 2, "x", True),
+        (-math.pi / 2, "x", True),
+        (math.pi / 2 + 1e-5, "x", False),
+        (0.0, "x", False),
+        (0.0, "y", True),
+        (-math.pi, "y", True),
+        (1e-5, "y", False),
+        (0.7, "", True),
+    ],
+)
+def test_whether_an_axis_is_parallel_to_that_of_bending(theta: float, name: str, fits: bool) -> None:
+    assert NeutralAxis(theta, 5.0).fits(Axes(name, False)) is fits
+
+
 SLENDER = replace(SQUARE, b=20.0, bars=Bars(8, 9, 3, 3), l_u=360.0, frame="nonsway", beta_dns=0.5)
 
 
@@ -391,6 +424,14 @@ def test_where_the_reciprocal_load_is_not_meant_the_sheet_says_so(force: Force, 
     under = steps.under(TITLE)
     assert under[:2] == [("worked", "A_g"), ("worked", "P_n_least")]
     assert under[-1][1].startswith(why)
+    assert "P_n_recip" not in steps.values
+
+
+def test_where_an_axis_alone_is_turned_the_reciprocal_load_is_not_used(steps: Any) -> None:
+    # Regression: with 2.4 in along y alone, a row of four bars stands on the edge of the block.
+    column = replace(SQUARE, h=24.0, bars=Bars(12, 11, 4, 4), ties=Ties("ties", 4, 12.0))
+    worked(steps, column, [Force("a", 500e3, 1.2e6, 2.0e6)])
+    assert steps.under(TITLE)[-1][1].startswith("Not used: bars on the edge of the block turn the neutral axis")
     assert "P_n_recip" not in steps.values
 
 

@@ -199,7 +199,7 @@ def test_clearances_of_heads_are_verified(
 
 def test_a_reduction_not_taken_is_said_on_the_page(row: Row, e19: Edition, steps: Any) -> None:
     worked(steps, row("hook 90", A_s_required=3.0, A_s_provided=4.0), e19)
-    assert "No reduction for excess reinforcement: not permitted for this kind (25.4.10.1)." in steps.reasons
+    assert "No reduction for excess reinforcement: not permitted for hooks (25.4.10.1)." in steps.reasons
 
 
 def test_a_required_length_carries_its_conditions(row: Row, e19: Edition, steps: Any) -> None:
