@@ -137,6 +137,41 @@ def test_minima_of_hooks_in_special_frames() -> None:
     assert hooks.hook_special_frame(f_y=40_000.0, f_c=10_000.0, lamb=1.0, d_b=0.375) == 6.0
 
 
+# common practice: 18.8.5.1, 60000/(65*sqrt(4000)) = 14.595128 diameters; lightweight 10 d_b and 7.5 in.
+@pytest.mark.parametrize(
+    ("f_y", "f_c", "lamb", "d_b", "expected"),
+    [
+        (60_000.0, 4_000.0, 1.0, 1.0, 14.595128),
+        (60_000.0, 4_000.0, 0.75, 1.0, 19.460171),
+        (40_000.0, 10_000.0, 1.0, 1.0, 8.0),
+        (40_000.0, 10_000.0, 1.0, 0.375, 6.0),
+        (40_000.0, 10_000.0, 0.75, 1.0, 10.0),
+        (40_000.0, 10_000.0, 0.75, 0.375, 7.5),
+    ],
+)
+def test_hook_in_a_joint(f_y: float, f_c: float, lamb: float, d_b: float, expected: float) -> None:
+    assert hooks.joint_hook_uncoated(f_y=f_y, f_c=f_c, lamb=lamb, d_b=d_b) == pytest.approx(expected, rel=1e-6)
+
+
+def test_hook_in_a_joint_agrees_with_the_formula_without_coating() -> None:
+    plain = {"f_y": 60_000.0, "f_c": 5_000.0, "lamb": 1.0, "d_b": 1.128}
+    assert hooks.joint_hook_uncoated(**plain) == hooks.hook_special_frame(**plain)
+
+
+def test_bars_in_a_joint_follow_from_the_hook() -> None:
+    # 18.8.5.3: 2.5 times, and 3.25 times over more than 12 in of concrete; 18.8.5.5: coating.
+    assert hooks.joint_hook(l_dh_j=14.0, psi_e=1.2) == pytest.approx(16.8)
+    assert hooks.joint_straight(l_dh_j=14.0, psi_e=1.0) == pytest.approx(35.0)
+    assert hooks.joint_straight_top(l_dh_j=14.0, psi_e=1.0) == pytest.approx(45.5)
+    assert hooks.joint_straight_top(l_dh_j=14.0, psi_e=1.5) == pytest.approx(68.25)
+
+
+def test_what_lies_outside_the_core_of_a_joint() -> None:
+    # 18.8.5.4: 1.6*(35-20)+20 = 44; all of it inside changes nothing.
+    assert hooks.joint_straight_outside_core(l_d=35.0, l_core=20.0) == pytest.approx(44.0)
+    assert hooks.joint_straight_outside_core(l_d=35.0, l_core=35.0) == pytest.approx(35.0)
+
+
 SMALL = st.sampled_from([bar.d_b for bar in BARS.values() if bar.size <= 11])
 
 

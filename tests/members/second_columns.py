@@ -244,7 +244,8 @@ def combined(loads: Mapping[str, Sequence[Vector]], standard: str, settings: Map
     """2.3.1 and 2.3.6: every sign, every alternative of a load, every variable load in and out."""
     nothing = [np.zeros(7)]
     D = sum(loads.get("D", []), np.zeros(7))
-    F, T, H = (nothing + list(loads.get(load, [])) for load in "FTH")
+    F = sum(loads.get("F", []), np.zeros(7))
+    T, H = (nothing + list(loads.get(load, [])) for load in "TH")
     L = nothing + [row for row in loads.get("L", [])]
     W = [sign * row for row in loads.get("W", []) for sign in (1, -1)]
     E = [sign * settings["rho"] * row for row in loads.get("E", []) for sign in (1, -1)]
@@ -268,9 +269,10 @@ def combined(loads: Mapping[str, Sequence[Vector]], standard: str, settings: Map
         (0.9, 0.9, 0.9 * D - E_v, [nothing], E),
     ]
     for dead, fluid, permanent, beside, lateral in basic:
-        sides = [[fluid * row for row in F], T, [share * row for share in (1.6, 0.9) for row in H]]
+        sides = [T, [share * row for share in (1.6, 0.9) for row in H]]
         for parts in itertools.product(*beside, lateral, *sides):
-            yield Factored(permanent + sum(parts), parts[len(beside)], dead * D[0])
+            total = permanent + fluid * F + sum(parts)
+            yield Factored(total, parts[len(beside)], dead * D[0] + fluid * F[0])
 
 
 # Slenderness
@@ -437,10 +439,13 @@ def shear(column: Row, edition: str, P: float, V_u: float, axis: str) -> Shear:
         legs = column[f"legs_{axis}"]
     far = depths[depths > 2 / 3 * deep]  # R22.5.5.1
     d = 0.8 * h if column["b"] is None else float(far.mean())  # 22.5.2.2
+    count = len(far)
+    if column["b"] is None:  # the fewest in any direction
+        count = math.floor(2 * math.acos(h / 6 / float(np.hypot(*bars[0]))) / (2 * math.pi / len(bars)))
     A_v = legs * SIZES[column["tie"]][1]
     f_yt = min(column["f_yt"], 60000)  # 20.2.2.4
     A_v_min = max(0.75 * math.sqrt(f_c), 50) * b_w * column["spacing"] / f_yt
-    rho_w = area * len(far) / (b_w * d)
+    rho_w = area * count / (b_w * d)
     size = 1.0 if A_v >= A_v_min else min(math.sqrt(2 / (1 + d / 10)), 1.0)
     rooted = column.get("lambda", 1.0) * min(math.sqrt(f_c), 100.0)
     A_g = gross_area(column)

@@ -712,7 +712,7 @@ def test_the_governing_combinations_alone_are_printed(steps: Any) -> None:
     worked = [name for kind, name in steps.steps if kind == "worked"]
     assert (worked.count("E_c"), worked.count("P_c"), worked.count("r")) == (1, 2, 2)
     assert steps.told("verdict") == [
-        "C1: axial force within 0.75 P_c, bending about x",
+        "C1: axial force within 0.75 of the critical load, bending about x",
         "C1: moment with second-order effects within 1.4 of the first-order one, bending about x",
     ]
 
