@@ -13,6 +13,7 @@ from typing import TYPE_CHECKING, Any
 
 from calcpack import notebook
 from calcpack.errors import Problem, SheetError
+from calcpack.folding import folded
 from calcpack.scheduled import Scheduled
 from calcpack.value import Value
 
@@ -86,7 +87,7 @@ class ColumnSheets(Scheduled):
         self._limit_states(done)
         for one in done:
             full = shown_by[one.row.mark] == one.row.mark
-            for item in one.items if full else [_folded(one, shown_by[one.row.mark])]:
+            for item in one.items if full else [_line(one, shown_by[one.row.mark])]:
                 notebook.show(item)
 
     def _chosen(self, marks: Sequence[str]) -> Sequence[str]:
@@ -147,15 +148,6 @@ def _severity(result: CheckResult) -> tuple[bool, float]:
     return result.verdict == "NG", result.ratio or 0.0
 
 
-def _folded(one: _Done, shown_by: str) -> Mapping[str, Any]:
-    """The working of a column that is not printed, as one line that carries its entries."""
-    entries = [entry for item in one.items for entry in item["entries"]]
-    text = f"{one.row.mark} is worked as {shown_by} is; its {len(entries)} values stand in the ledger."
-    return {
-        "type": "note",
-        "style": "reason",
-        "entries": entries,
-        "reads": [read for item in one.items for read in item["reads"]],
-        "confirms": [pair for item in one.items for pair in item.get("confirms", ())],
-        "parts": [{"text": text, "link": "", "sheet": ""}],
-    }
+def _line(one: _Done, shown_by: str) -> Mapping[str, Any]:
+    """The working of a column that is not printed, as one line."""
+    return folded(one.items, f"{one.row.mark} is worked as {shown_by} is; its {{count}} values stand in the ledger.")

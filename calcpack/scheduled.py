@@ -48,6 +48,9 @@ class Scheduled(Solving):
         SheetError : no such mark
         RangeError : everything that is wrong with the row, at once
         """
+        return self._work_termination(mark)[1]
+
+    def _work_termination(self, mark: str) -> tuple[Any, Value]:
         from calcpack.job import read_terminations
         from calcpack.members.anchorage import work_termination
 
@@ -57,7 +60,7 @@ class Scheduled(Solving):
         where = f", {row.location}" if row.location else ""
         self._head("anchorage", [row], f"{row.mark}: {row.kind}, #{row.bar} bar{where}")
         required, _ = work_termination(SheetPad(self), row, self.code)
-        return required
+        return row, required
 
     def column(self, mark: str) -> None:
         """Work and verify every check of a column of the schedule.
@@ -147,7 +150,8 @@ class SheetPad:
         dimension = symbols.lookup(symbol).dimension
         unit = display_unit(dimension)
         measured = Measured(value, dimension, unit, convert(value, unit))
-        made: Value = self.sheet._set_solved(symbol, measured, means, method, clause, solved_from)
+        edition = self.sheet.code.name
+        made: Value = self.sheet._set_solved(symbol, measured, means, method, clause, solved_from, edition)
         return made
 
     def confirm(self, solved: Sequence[Value], by: Sequence[Value]) -> None:

@@ -13,6 +13,7 @@ from pathlib import Path
 from typing import TYPE_CHECKING, Any
 
 from calcpack import notebook, symbols
+from calcpack.anchorage_sheets import AnchorageSheets
 from calcpack.column_sheets import ColumnSheets
 from calcpack.errors import InputError, Problem, SheetError
 from calcpack.formula import Clause, Formula
@@ -34,7 +35,7 @@ _STATUS = ("confirmed", "assumed")
 
 
 @dataclass
-class Sheet(ColumnSheets, LengthSheets, Tabulating):
+class Sheet(AnchorageSheets, ColumnSheets, LengthSheets, Tabulating):
     """A calculation sheet, one for each notebook.
 
     Parameters

@@ -45,14 +45,22 @@ class Solving(SheetBook):
         return self._set_solved(symbol, self._measured(symbol, value), means, method, clause, solved_from)
 
     def _set_solved(
-        self, symbol: str, measured: Measured, means: str, method: str, clause: str, solved_from: Sequence[Value]
+        self,
+        symbol: str,
+        measured: Measured,
+        means: str,
+        method: str,
+        clause: str,
+        solved_from: Sequence[Value],
+        edition: str = "",
     ) -> Value:
         self._begin()
         identifier = self._free_ids([symbol])[0]
         shown = _many_figures(measured)
+        origin = tuple(dict.fromkeys(item.entry.id for item in solved_from))
         entry = Entry(
             identifier, "solved", symbol, means, measured.value, coherent_unit(measured.dimension), shown, self.id,
-            clause=clause, method=method, solved_from=tuple(dict.fromkeys(item.entry.id for item in solved_from)),
+            clause=clause, edition=edition, method=method, solved_from=origin,
         )  # fmt: skip
         kept = self._keep(entry, measured.dimension)
         self._show(

@@ -20,7 +20,7 @@ from job_samples import issued_demo
 
 from calcpack.items import lines, stored_items
 from calcpack.ledger import Ledger, replay
-from calcpack.typeset.digits import last_place
+from calcpack.typeset.digits import last_place, parse_number
 from calcpack.typeset.emit import MATHML
 from calcpack.typeset.rows import condition_row, equation
 
@@ -149,7 +149,8 @@ def test_every_worked_value_is_reproduced_from_the_pdf_alone(ledger: list[dict[s
     done = replay(ledger)
     assert [item for item in done if not item.agrees] == []
     worked = {item["id"] for item in ledger if item["kind"] == "worked"}
-    assert {item.id for item in done} == worked | {item["id"] for item in ledger if item["kind"] == "verdict"}
+    checked = {item["id"] for item in ledger if item["kind"] in ("verdict", "solved")}
+    assert {item.id for item in done} == worked | checked
     assert len(worked) > 100
 
 
@@ -244,13 +245,15 @@ _SINCE = re.compile(r", that is (.*?)(?:; since|</span>(?!</))", re.DOTALL)
 def printed_lines(body: str) -> Iterator[tuple[list[list[page_reading.Token]], str, str]]:
     """Worked lines of a sheet's HTML: the parts between the equals signs, the result, and the source of the line."""
     for line in re.split(r'<div class="line(?: wide)?">', body)[1:]:
+        if not _RESULT.search(line):
+            continue  # an equation in symbols, above a table of its results
         tokens = [token for right in _ROW.findall(line) for token in page_reading.mathml(right)]
         result = page_reading.split_at_equals(page_reading.mathml(_RESULT.findall(line)[0]))[-1]
         assert len(result) == 1
         yield page_reading.split_at_equals(tokens), plain(str(result[0][1])), line
 
 
-def test_every_line_of_the_page_gives_its_result(sections: dict[str, str], ledger: list[dict[str, Any]]) -> None:
+def test_every_line_of_the_page_gives_its_result(sections: dict[str, str], notebooks: list[dict[str, Any]]) -> None:
     """B6, B7: the same, read from the HTML as it was issued."""
     count = conditions = 0
     for body in sections.values():
@@ -270,8 +273,26 @@ def test_every_line_of_the_page_gives_its_result(sections: dict[str, str], ledge
                     assert page_reading.holds(page_reading.mathml(condition)), condition
                     conditions += 1
             count += 1
-    assert count == sum(item["kind"] == "worked" for item in ledger)
+    shown = [item for notebook in notebooks for item in stored_items(notebook) if item["type"] == "work"]
+    assert count == sum(len(item["lines"]) for item in shown) > 400
     assert conditions > 20
+
+
+def test_every_cell_of_a_worked_table_states_its_entry(
+    notebooks: list[dict[str, Any]], ledger: list[dict[str, Any]]
+) -> None:
+    """B7: what a cell shows is the value of its entry, to the last digit."""
+    entries = {item["id"]: item for item in ledger}
+    count = 0
+    for notebook in notebooks:
+        for item in stored_items(notebook):
+            for data in item["entries"] if item["type"] == "tabulated" else ():
+                entry = entries[data["id"]]
+                number, unit = entry["shown"].partition(" ")[::2]
+                scale = {"kip": 1e3, "kip·ft": 12e3, "ksi": 1e3}.get(unit, 1.0)
+                assert abs(parse_number(number) * scale - entry["value"]) <= last_place(number) * scale * 0.5001
+                count += 1
+    assert count > 200
 
 
 # Links
@@ -287,9 +308,23 @@ def test_every_link_of_the_html_has_its_target(issued: Path) -> None:
     assert all(link.startswith("#") and unescape(link[1:]) in ids for link in links)
 
 
-def test_every_value_of_the_ledger_can_be_linked_to(issued: Path, ledger: list[dict[str, Any]]) -> None:
+def unprinted(notebooks: list[dict[str, Any]]) -> set[str]:
+    """Entries of workings that are told in one line, or in one cell of a table: their values are in the ledger alone."""
+    found: set[str] = set()
+    for item in (item for notebook in notebooks for item in stored_items(notebook)):
+        if item["type"] in ("note", "tabulated"):
+            cells = [*(cell for row in item.get("rows", ()) for cell in row["cells"]), *item.get("totals", ())]
+            found |= {entry["id"] for entry in item["entries"]} - {cell["id"] for cell in cells if cell}
+    return found
+
+
+def test_every_printed_value_of_the_ledger_can_be_linked_to(
+    issued: Path, ledger: list[dict[str, Any]], notebooks: list[dict[str, Any]]
+) -> None:
     ids = set(re.findall(r'\sid="([^"]+)"', (issued / "package.html").read_text("utf-8")))
-    assert {item["id"].replace("/", ":") for item in ledger} <= ids
+    printed = {item["id"] for item in ledger} - unprinted(notebooks)
+    assert {identifier.replace("/", ":") for identifier in printed} <= ids
+    assert len(printed) > 800
 
 
 def targets(pdf: pypdf.PdfReader, pages: list[str]) -> dict[str, list[tuple[int, float, float]]]:
@@ -309,10 +344,16 @@ def targets(pdf: pypdf.PdfReader, pages: list[str]) -> dict[str, list[tuple[int,
 
 
 def test_every_substituted_value_of_the_pdf_leads_to_its_origin(
-    pdf: pypdf.PdfReader, pages: list[str], sections: dict[str, str], ledger: list[dict[str, Any]]
+    pdf: pypdf.PdfReader,
+    pages: list[str],
+    sections: dict[str, str],
+    ledger: list[dict[str, Any]],
+    notebooks: list[dict[str, Any]],
 ) -> None:
     """B1: each link lands on the page that holds the value's line, on the sheet where it was set."""
     found = targets(pdf, pages)
+    tables = [item for notebook in notebooks for item in stored_items(notebook) if item["type"] == "tabulated"]
+    cells = {entry["id"] for item in tables for entry in item["entries"]}
     entries = {item["id"]: item for item in ledger}
     places: dict[str, set[tuple[int, float, float]]] = {}
     for sheet, body in sections.items():
@@ -326,7 +367,9 @@ def test_every_substituted_value_of_the_pdf_leads_to_its_origin(
         ((page, _, _),) = spots
         entry = entries[identifier]
         assert block(pages[page], "Sheet") == entry["sheet"], identifier
-        assert re.sub(r"\s", "", entry["shown"]) in re.sub(r"\s", "", pages[page]), identifier
+        # The unit of a cell stands in the head of its column.
+        text = entry["shown"].partition(" ")[0] if identifier in cells else entry["shown"]
+        assert re.sub(r"\s", "", text) in re.sub(r"\s", "", pages[page]), identifier
     everywhere = [next(iter(spots)) for spots in places.values()]
     assert len(set(everywhere)) == len(everywhere)  # and two values never share one
 

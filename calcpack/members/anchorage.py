@@ -160,8 +160,12 @@ class _RowRules:
         return Stated(value or 0.0, means, source if value == default else place(self.row))
 
 
-def required_length(pad: Pad[T], row: TerminationLike, edition: Edition) -> Required[T]:
+def required_length(pad: Pad[T], row: TerminationLike, edition: Edition, verified: bool = True) -> Required[T]:
     """Work the length that a row requires, minima included, and verify the conditions beside it, step by step on a pad.
+
+    Parameters
+    ----------
+    verified : without, the conditions are left out, for what is compared and not chosen
 
     Raises
     ------
@@ -169,7 +173,7 @@ def required_length(pad: Pad[T], row: TerminationLike, edition: Edition) -> Requ
     """
     refuse_problems(row, edition)
     if row.other_bar is not None and row.other_bar != row.bar:
-        return _lap_of_sizes(pad, row, edition, _OF_SIZES[row.kind])
+        return _lap_of_sizes(pad, row, edition, _OF_SIZES[row.kind], verified)
     symbol = _KINDS[row.kind].symbol
     working = Working(pad, _RowRules(row, edition))
     working.state(symbol)
@@ -177,11 +181,11 @@ def required_length(pad: Pad[T], row: TerminationLike, edition: Edition) -> Requ
     notes = [*_notes(row, edition)]
     for text in notes:
         pad.reason(f"{text}.")
-    asked = requirements(working, row, edition)
+    asked = requirements(working, row, edition) if verified else ()
     return Required(symbol, value, cited_clause(row, edition), asked, (*_said(asked), *notes))
 
 
-def _lap_of_sizes(pad: Pad[T], row: TerminationLike, edition: Edition, sizes: _OfSizes) -> Required[T]:
+def _lap_of_sizes(pad: Pad[T], row: TerminationLike, edition: Edition, sizes: _OfSizes, verified: bool) -> Required[T]:
     """The greater of the development of the larger bar and the lap of the smaller one."""
     smaller, larger = sorted([row.bar, row.other_bar or row.bar])
     # The ties of a lap are not those of development in compression; a lap takes no reduction for excess reinforcement.
@@ -203,7 +207,7 @@ def _lap_of_sizes(pad: Pad[T], row: TerminationLike, edition: Edition, sizes: _O
     notes = [*_notes(row, edition)]
     for text in notes:
         pad.reason(f"{text}.")
-    asked = requirements(second, other, edition)
+    asked = requirements(second, other, edition) if verified else ()
     clause = sizes.formula.clause(edition.standard).number
     return Required(symbol, value, clause, asked, (*_said(asked), *notes))
 

@@ -142,7 +142,7 @@ def _as_kind(row: TerminationLike, kind: str) -> Termination:
 
 def _one(pad: Pad[T], row: Termination, length: float | None, edition: Edition, available: T | None) -> WorkedOption[T]:
     try:
-        required_length(_FLOATS, row, edition)
+        asked = required_length(_FLOATS, row, edition).requirements
     except RangeError as error:
         return WorkedOption(Option(row.kind, refused=tuple(problem.line() for problem in error.problems)))
     pad.heading(f"{row.mark}: {row.kind}")
@@ -151,16 +151,16 @@ def _one(pad: Pad[T], row: Termination, length: float | None, edition: Edition, 
         said = [str(one) for one in found if one.state == state]
         if said:
             pad.reason(f"{words}: {'; '.join(said)}.")
-    required = required_length(pad, row, edition)
+    required = required_length(pad, row, edition, verified=False)
     is_length = required.symbol.startswith("l_")
     number = pad.number(required.value)
-    met = all(one.met for one in required.requirements)
+    met = all(one.met for one in asked)
     fits = passes(number / length) and met if length is not None and is_length else None
     ratio = None
     if available is not None and is_length:
         ratio = pad.work(length_over_available, l_required=required.value, l_available=available)
     option = Option(
-        row.kind, required.symbol, number, required.clause, fits, found, required.requirements,
+        row.kind, required.symbol, number, required.clause, fits, found, asked,
         _at_best(row, edition, found), (),
     )  # fmt: skip
     return WorkedOption(option, required.value, ratio)
@@ -180,7 +180,7 @@ def _at_best(row: Termination, edition: Edition, found: tuple[Reduction, ...]) -
 HEAD = ("Option", "Required", "Over available", "Fits", "Applied", "Not applied", "To be stated for less", "At best")
 
 
-def option_cells(worked: WorkedOption[T]) -> tuple[str | T, ...]:
+def option_cells(worked: WorkedOption[T]) -> tuple[Any, ...]:
     """The cells of an option in a table with the head `HEAD`; what is worked on the pad stands as its value."""
     one = worked.option
     if worked.value is None:

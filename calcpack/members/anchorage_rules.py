@@ -99,11 +99,25 @@ def _coating_straight(row: TerminationLike, _edition: Edition) -> Choice:
     if row.c_b is None:
         reason = f"{_coating_words(row)} Clear cover or clear spacing not stated: the smaller factor cannot be claimed."
         return Choice(factors.coated_bar_unknown, reason)
+    if short := _short(row):
+        return Choice(
+            factors.coated_bar_unknown, f"{_coating_words(row)} {short}: the smaller factor cannot be claimed."
+        )
     name = "d_b" if one else "d_be"
     return Choice(
         factors.coated_bar_by_c_b if one else bundles.coated_bundle_by_c_b,
         f"{_coating_words(row)} c_b is below 3.5 {name} where cover or spacing is short.",
     )
+
+
+def _short(row: TerminationLike) -> str:
+    """Cover or spacing, where only one of them is stated and falls short, whatever c_b says."""
+    d_b = diameter_of_bundle(row)
+    if row.clear_cover is not None and row.clear_cover < 3 * d_b:
+        return "Clear cover below 3 bar diameters"
+    if row.clear_spacing is not None and row.clear_spacing < 6 * d_b:
+        return "Clear spacing below 6 bar diameters"
+    return ""
 
 
 def _coating_words(row: TerminationLike) -> str:

@@ -6,7 +6,6 @@ from collections.abc import Iterator
 
 from calcpack.aci318.bars import BARS, NO_11
 from calcpack.aci318.editions import Edition
-from calcpack.aci318.factors import coated_bar
 from calcpack.errors import Problem
 from calcpack.members.termination import TerminationLike
 
@@ -30,7 +29,6 @@ def claims(row: TerminationLike, edition: Edition) -> Iterator[Problem]:
     yield from _column(row)
     yield from _joint(row, edition)
     yield from _support(row)
-    yield from _coating(row, edition)
     if row.kind == "mechanical splice" and row.available is not None:
         yield Problem(
             f"available = {row.available:,g} in", "blank: a mechanical splice is judged by its force (25.5.7.1)"
@@ -136,19 +134,3 @@ def _support(row: TerminationLike) -> Iterator[Problem]:
             )
         elif value is not None and not 0 < value <= _LARGEST:
             yield Problem(f"{name} = {value:,g} {unit}", "above zero (9.7.3.8.3)")
-
-
-def _coating(row: TerminationLike, edition: Edition) -> Iterator[Problem]:
-    """Coated bars whose c_b says cover and spacing enough for the smaller factor, where the stated ones do not."""
-    if row.coating not in ("epoxy", "dual") or row.c_b is None or row.bar not in BARS or row.bundle != 1:
-        return
-    d_b = BARS[row.bar].d_b
-    if row.kind not in ("straight tension", "lap tension") or row.c_b < 3.5 * d_b:
-        return
-    spacing = None if row.clear_spacing is None else (row.clear_spacing + d_b) / 2
-    cover = None if row.clear_cover is None else row.clear_cover + d_b / 2
-    for name, largest in (("clear_cover", cover), ("clear_spacing", spacing)):
-        if largest is not None and largest < 3.5 * d_b and row.c_b > _ROUNDED * largest:
-            given = f"coating = {row.coating}, c_b = {row.c_b:,g} in, {name} = {getattr(row, name):,g} in"
-            limit = f"c_b up to {largest:,g} in: the coating factor is 1.2 by the one and 1.5 by the other"
-            yield Problem(given, f"{limit} ({coated_bar.clause(edition.standard).number})")

@@ -73,13 +73,13 @@ def _materials(row: TerminationLike, edition: Edition) -> Iterator[Problem]:
         high, clause = edition.head_f_y_max, "25.4.4.1"
     yield from _limited("f_y", row.f_y, "psi", Limit("f_y", f"{edition.name} {clause}", high=high))
     if YIELD_LEAST.low <= row.f_y <= high and not any(abs(row.f_y / grade - 1) <= _ROUNDED for grade in _GRADES):
-        allowed = f"a grade of ASTM A615 or A706: {', '.join(f'{grade:,} psi' for grade in _GRADES)} (20.2.1.3)"
+        allowed = f"a grade of ASTM A615, A706 or A996: {', '.join(f'{grade:,} psi' for grade in _GRADES)} (20.2.1.3)"
         yield Problem(f"f_y = {row.f_y:,g} psi", allowed, "state the grade of the bars")
     yield from _lightweight(row, edition)
 
 
-# Grade 75 is one of the editions of A615 before 2018. Metric grades are up to 2 % off: Grade 420 is 60,916 psi.
-_GRADES = (40_000, 60_000, 75_000, 80_000, 100_000)
+# Grade 50 is one of A996, Grade 75 of A615 before 2018. Metric grades are up to 2 % off: Grade 420 is 60,916 psi.
+_GRADES = (40_000, 50_000, 60_000, 75_000, 80_000, 100_000)
 _ROUNDED = 0.02
 
 

@@ -67,6 +67,7 @@ def _origin(entry: Entry) -> Iterator[str]:
         since = f"  since {entry.condition}" if entry.condition else ""
         yield f"= {entry.expression}{since}  {clause}"
     elif entry.kind == "solved":
-        yield f"solved: {entry.method}  {clause}"
+        by = f"; confirmed by {', '.join(entry.confirmed_by)}" if entry.confirmed_by else ""
+        yield f"solved: {entry.method}{by}  {clause}"
     else:
         yield f"{entry.verdict}: demand over capacity{f'  {clause}' if clause != '[]' else ''}"

@@ -12,6 +12,7 @@ from calcpack.formula import Formula
 MODULES = (
     *("development", "factors", "hooks", "heads", "compression", "laps", "columns", "ties", "slenderness", "stiffness"),
     *("stress_block", "compatibility", "bending", "shear", "special_frames", "lateral_support"),
+    *("bundles", "continuity", "dowels", "splices"),
 )
 
 

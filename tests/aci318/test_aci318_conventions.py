@@ -82,7 +82,7 @@ def test_only_roots_and_dimensioned_coefficients_are_empirical(any_formula: Form
 
 
 def test_each_module_lists_its_formulas(formula_names: dict[str, list[str]]) -> None:
-    assert len(formula_names) == 16
+    assert len(formula_names) == 20
     for module, names in formula_names.items():
         listed = importlib.import_module(f"calcpack.aci318.{module}").__all__
         public = {name for name in listed if not name.startswith("_")} - {"cited_in"}
@@ -92,7 +92,7 @@ def test_each_module_lists_its_formulas(formula_names: dict[str, list[str]]) -> 
 def test_the_package_is_a_table_of_contents() -> None:
     assert aci318.__all__ == sorted(aci318.__all__)
     assert aci318.hooks is importlib.import_module("calcpack.aci318.hooks")
-    with pytest.raises(AttributeError, match=r"calcpack.aci318 has no 'hook'; it has bars, bending, columns"):
+    with pytest.raises(AttributeError, match=r"calcpack.aci318 has no 'hook'; it has bars, bending, bundles, columns"):
         _ = aci318.hook
 
 
@@ -129,6 +129,8 @@ TYPICAL = {
         h_x 7.417, s_o 6, b_c 21.375, A_sh 1.24, k_f 1.08, k_n 1.25
         n 4, n_bars 12, n_face 4, l_d_a 35.5756, l_dh_a 18.9737, l_dt_a 14.3568, l_dc_a 20.3251, l_sc_a 33.84
         l_d 35.5756, l_dh_j 14.2346, l_core 20.5
+        n_bundle 3, d_be 1.2345, k_bundle 1.2, r_spliced 0.5, r_stress 0.375, l_st_s 46.2483, l_dc 20.3251, l_sc_s 33.84
+        M_n 2456789, l_a 8.625, l_n 283.5, A_s_pos 4.74, A_s_neg 6.32
         l_st 46.2483, psi_t 1.3, psi_e 1.2, psi_s 0.8, psi_g 1.15, psi_c 0.867, psi_r 0.75, psi_o 1.25, psi_p 1.6
         """.strip().split("\n")
         for pair in line.strip().split(", ")

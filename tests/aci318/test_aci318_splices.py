@@ -52,7 +52,9 @@ def test_a_share_lies_between_nothing_and_all(share: float) -> None:
         splices.lap_by_area(l_d_a=30.0, A_s_required=1.0, A_s_provided=2.0, r_spliced=share)
 
 
-@pytest.mark.parametrize(("larger", "smaller", "expected"), [(47.0, 37.0, 47.0), (30.0, 37.0, 37.0), (37.0, 37.0, 37.0)])
+@pytest.mark.parametrize(
+    ("larger", "smaller", "expected"), [(47.0, 37.0, 47.0), (30.0, 37.0, 37.0), (37.0, 37.0, 37.0)]
+)
 def test_laps_of_two_sizes(larger: float, smaller: float, expected: float) -> None:
     # 25.5.2.2 and 25.5.5.4: development of the larger bar or lap of the smaller one.
     assert splices.lap_tension_of_sizes(l_d=larger, l_st_s=smaller) == expected

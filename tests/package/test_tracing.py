@@ -86,3 +86,9 @@ def test_a_name_that_is_not_there(ledger: Ledger) -> None:
         trace(ledger, "C-01/bb")
     with pytest.raises(LedgerError, match=r"'zzzzzz' in this job; ledger\.json lists all ids"):
         trace(ledger, "zzzzzz")
+
+
+def test_what_confirms_a_solved_value_is_named(ledger: Ledger) -> None:
+    ledger.add(worked("C-01/e", "c - 1", c="C-01/c"))
+    ledger.confirm("C-01/c", ["C-01/e"])
+    assert "\n   solved: bisection; confirmed by C-01/e  [22.2]\n" in trace(ledger, "C-01/c")
