@@ -18,6 +18,10 @@ from calcpack.value import Value
 __all__ = ["AnchorageSheets"]
 
 
+# Columns of the table of options that are sentences: they stand below it.
+_SAID = ("Applied", "Not applied", "To be stated for less")
+
+
 @dataclass(frozen=True)
 class _Done:
     """A termination as it came out: its length, its verdict, and the items that show its working."""
@@ -82,9 +86,18 @@ class AnchorageSheets(Scheduled):
         with self._holding() as items:
             found = work_options(SheetPad(self), row, self.code)
         self._refuse_others(worked, [one.option.kind for one in found])
-        self.table(HEAD, [option_cells(one) for one in found], f"Ways to anchor the bar of {row.mark}")
-        for kind, part in _by_heading(items).items():
-            shown = part if kind in worked or not kind else [folded(part, f"{kind}: {{count}} values in the ledger.")]
+        rows = [option_cells(one) for one in found]
+        places = [place for place, name in enumerate(HEAD) if name not in _SAID]
+        shown_cells = [[cells[place] for place in places] for cells in rows]
+        self.table([HEAD[place] for place in places], shown_cells, f"Ways to anchor the bar of {row.mark}")
+        sheet: Any = self
+        for cells in rows:
+            said = [f"{name.lower()}: {cells[HEAD.index(name)]}" for name in _SAID if cells[HEAD.index(name)] != "–"]
+            if said:
+                sheet._note("reason", [f"{cells[0].capitalize()}; {'; '.join(said)}."])
+        for text, part in _by_heading(items).items():
+            full = not text or text.partition(": ")[2] in worked
+            shown = part if full else [folded(part, f"{text}: {{count}} values in the ledger.")]
             for item in shown:
                 notebook.show(item)
 

@@ -61,6 +61,11 @@ def axial(column: Row) -> tuple[float, float]:
     return P_o, (0.75 * 0.85 if column["spiral"] else 0.65 * 0.80) * P_o
 
 
+def pull(column: Row) -> float:
+    """phi P_nt,max; 22.4.3."""
+    return float(0.9 * column["f_y"] * steel_area(column))
+
+
 @dataclass(frozen=True)
 class Section:
     """What bends: the column, its bars and its outline, None where it is round."""
@@ -196,11 +201,11 @@ def ray_ratio(section: Section, point: Point) -> float:
     M = math.hypot(M_x, M_y)
     P_o, phi_P_n_max = axial(section.column)
     by_cap = max(P, 0.0) / phi_P_n_max
-    if M <= NOISE * abs(P) * section.column["h"]:
-        return by_cap if P >= 0 else -P / (0.9 * section.column["f_y"] * steel_area(section.column))
+    if NOISE * abs(P) * section.column["h"] >= M:
+        return by_cap if P >= 0 else -P / pull(section.column)
     unit = P_o * section.column["h"]
     slope = math.atan2(P / P_o, M / unit)
-    met = crossings(section, math.atan2(M_x, M_y), lambda N, m, phi: math.atan2(N / P_o, m / unit) - slope)
+    met = crossings(section, math.atan2(M_x, M_y), lambda N, m, _: math.atan2(N / P_o, m / unit) - slope)
     strength = min(phi * math.hypot(N / P_o, math.hypot(m_x, m_y) / unit) for N, m_x, m_y, phi in met)
     return max(math.hypot(P / P_o, M / unit) / strength, by_cap)
 
@@ -209,9 +214,9 @@ def moment_ratio(section: Section, point: Point) -> float | None:
     """Demand over design strength at constant P; None where P alone is too much."""
     P, M_x, M_y = point
     P_o, phi_P_n_max = axial(section.column)
-    if P > phi_P_n_max or -P > 0.9 * section.column["f_y"] * steel_area(section.column):
+    if not -pull(section.column) <= P <= phi_P_n_max:
         return None
-    met = crossings(section, math.atan2(M_x, M_y), lambda N, m, phi: (phi * N - P) / P_o)
+    met = crossings(section, math.atan2(M_x, M_y), lambda N, _, phi: (phi * N - P) / P_o)
     return math.hypot(M_x, M_y) / min(phi * math.hypot(m_x, m_y) for _, m_x, m_y, phi in met)
 
 
@@ -358,14 +363,15 @@ def one_axis(column: Row, axis: str, P: float, ends: Vector, first: Vector, beta
     slender = P > 0 and (over or sways_beyond(column, axis))
     P_c = math.pi**2 * stiffness(column, axis, beta_dns, formula) / (k * column["l_u"]) ** 2
     M_2_min, C_m = P * (0.6 + 0.03 * deep), 0.6 - 0.4 * quotient  # 6.6.4.5.4, 6.6.4.5.3
-    stable = not slender or P < 0.75 * P_c
-    delta = max(C_m / (1 - P / (0.75 * P_c)), 1.0) if slender and stable else 1.0
+    used = P / (0.75 * P_c)
+    stable = not slender or used < 1
+    delta = max(C_m / (1 - used), 1.0) if slender and stable else 1.0
     least = max(abs(large), M_2_min) if slender else abs(large)
     first_order = max(float(abs(first).max()), M_2_min)
     values = {
         "k": k, "r": r, "slenderness_max": limit, "beta_dns": beta_dns, "P_c": P_c, "C_m": C_m, "delta_ns": delta,
-        "M_2_min": M_2_min, "M_c": delta * least, "M_c_max": 1.4 * first_order, "stability": P / (0.75 * P_c),
-        "used": k_limit * column["l_u"] / r / limit,
+        "M_2_min": M_2_min, "M_c": delta * least, "M_c_max": 1.4 * first_order, "stability": used,
+        "slenderness": k_limit * column["l_u"] / r / limit,
     }  # fmt: skip
     sign = math.copysign(delta, large)
     return Axis(values, slender, stable, large, delta * large, sign * least)
