@@ -6,10 +6,11 @@ and a length that nobody offers is not compared.
 
 from __future__ import annotations
 
+from collections.abc import Iterable
 from dataclasses import dataclass
 
 from calcpack.figures.drawing import CENTRE, INK, SOFT, TEXT, Drawing, Figure, Point
-from calcpack.figures.elevation import callout, lengths_along, plain, word
+from calcpack.figures.elevation import callout, plain, word
 from calcpack.figures.lettering import text_width
 from calcpack.figures.trade import Refusal, feet_inches, scale_that_fits
 
@@ -17,6 +18,7 @@ __all__ = [
     "Lengths",
     "force",
     "label_room",
+    "lengths_from",
     "of",
     "patch",
     "section_line",
@@ -121,12 +123,19 @@ def patch(drawing: Drawing, low: Point, high: Point, face: str) -> None:
         drawing.break_line((x, bottom), (x, top))
 
 
-def section_line(drawing: Drawing, low: float, high: float, label: str, *, left: bool = False) -> None:
-    """The critical section at x = 0, a chain line, labelled below and to one side."""
+def section_line(drawing: Drawing, low: float, high: float) -> None:
+    """The critical section at x = 0, a chain line a little past both levels."""
     past = 0.1 * drawing.scale
     drawing.line((0.0, low - past), (0.0, high + past), pen=CENTRE, name="critical section")
-    side = -0.06 if left else 0.06
-    drawing.text(label, (0.0, low), (side, -0.19), anchor="right" if left else "left", size=7.0, colour=SOFT)
+
+
+def lengths_from(drawing: Drawing, y: float, dimensions: Iterable[tuple[float, str]]) -> None:
+    """Level dimensions from x = 0 above `y`, the shorter nearer.
+
+    Text that does not go between the ticks stands on the left, where no extension line of a longer one runs through it.
+    """
+    for number, (length, text) in enumerate(sorted(dimensions)):
+        drawing.dim_x(0.0, length, y, 0.18 + 0.24 * number, text, "left")
 
 
 def force(drawing: Drawing, at: Point, way: int, *, compression: bool) -> None:
@@ -186,8 +195,9 @@ def straight_end(
     patch(drawing, (-back, low), (right, high), face)
     drawing.bar([(-back, 0.0), (lengths.drawn, 0.0)], d_b)
     force(drawing, (-back, 0.0), -1, compression=compression)
-    section_line(drawing, low, high, section_label)
-    lengths_along(drawing, 0.0, high, 0.18, *lengths.dimensions)
+    section_line(drawing, low, high)
+    drawing.text(section_label, (0.0, low), (0.06, -0.19), anchor="left", size=7.0, colour=SOFT)
+    lengths_from(drawing, high, lengths.dimensions)
     if face:
         drawing.dim_y(*((d_b / 2, high) if top else (low, -d_b / 2)), right, 0.2)
     callout(drawing, (-back + 0.2 * drawing.scale, 0.0), d_b, low, bar_label)

@@ -5,10 +5,9 @@ from __future__ import annotations
 import math
 
 from calcpack.figures.drawing import INK, Drawing, Figure, Point, arc
-from calcpack.figures.elevation import plain
 from calcpack.figures.ends import Lengths, of, short_scale
-from calcpack.figures.joints import Joint, Surroundings
-from calcpack.figures.trade import Refusal, feet_inches
+from calcpack.figures.joints import FOOT, Joint, Surroundings
+from calcpack.figures.trade import Refusal, feet_inches, inches
 
 __all__ = ["headed_detail", "hooked_end"]
 
@@ -74,8 +73,8 @@ def headed_detail(
     joint.call_out((end, 0.5 * half), 0.12, label)
     joint.call_out((bearing, -half), -0.2, "bearing face")
     alt = (
-        f"Elevation to scale{of(mark)}: {bar_label}, {d_b:.3f} in in diameter, with a {label}; from the "
-        f"{section_label} to the bearing face of the head {lengths.sentence}{around.sentence}."
+        f"Elevation to scale{of(mark)}: {bar_label}, {d_b:.3f} in in diameter, with a {label}{around.sentence}; "
+        f"from the {section_label} to the bearing face of the head {lengths.sentence}."
     )
     return drawing.finish(f"Headed {bar_label} in a joint", alt, [*lengths.verdicts, *around.notes])
 
@@ -135,8 +134,8 @@ def hooked_end(
     _dimension_hook(joint, path, bend, bend_diameter, extension)
     alt = (
         f"Elevation to scale{of(mark)}: {bar_label}, {d_b:.3f} in in diameter, ends in a standard {bend} degree hook, "
-        f"bend diameter {plain(bend_diameter)} inside, extension {plain(extension)}; from the {section_label} to the "
-        f"outside of the hook {lengths.sentence}{around.sentence}."
+        f"bend diameter {inches(bend_diameter)} in inside, extension {inches(extension)} in{around.sentence}; from the "
+        f"{section_label} to the outside of the hook {lengths.sentence}."
     )
     return drawing.finish(f"Standard {bend}° hook of {bar_label}", alt, [*lengths.verdicts, *around.notes])
 
@@ -150,15 +149,15 @@ def _hook(centre: Point, radius: float, extension: float, bend: int) -> list[Poi
 
 def _dimension_hook(joint: Joint, path: list[Point], bend: int, bend_diameter: float, extension: float) -> None:
     """The bend and the extension; that of a 180-degree hook is carried below the joint, clear of the bar."""
-    drawing, d_b, text = joint.drawing, joint.d_b, f"{plain(extension)} ext."
+    drawing, d_b, text = joint.drawing, joint.d_b, f"{inches(extension)} in ext."
     (x, _), (tail, low) = path[0], path[-1]
     outer, angle = (bend_diameter + 2 * d_b) / 2, math.radians(30)
     tip = (x + outer * math.cos(angle), outer * math.sin(angle) - (bend_diameter + d_b) / 2)
-    joint.call_out(tip, 0.1, f"{plain(bend_diameter)} inside dia.")
+    joint.call_out(tip, 0.1, f"{inches(bend_diameter)} in inside dia.")
     if bend == 90:
         drawing.dim_y(low, low + extension, joint.far, 0.24, text)
         return
     for at in (tail, tail + extension):
         start, end = drawing.paper((at, low - d_b / 2), (0.0, -0.04)), drawing.paper((at, joint.foot))
         drawing.stroke(start, end)
-    drawing.dim_x(tail, tail + extension, joint.foot, -0.2, text, "left")
+    drawing.dim_x(tail, tail + extension, joint.foot, -FOOT, text, "left")

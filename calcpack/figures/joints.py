@@ -4,12 +4,15 @@ from __future__ import annotations
 
 from dataclasses import dataclass
 
-from calcpack.figures.drawing import Drawing, Point
-from calcpack.figures.elevation import callout, inside, lengths_along
-from calcpack.figures.ends import ABOVE, BELOW, BEYOND, Lengths, label_room, section_line, stated
+from calcpack.figures.drawing import SOFT, Drawing, Point
+from calcpack.figures.elevation import callout, inside
+from calcpack.figures.ends import ABOVE, BELOW, BEYOND, Lengths, label_room, lengths_from, section_line, stated
 from calcpack.figures.trade import Refusal, feet_inches
 
-__all__ = ["Joint", "Surroundings"]
+__all__ = ["FOOT", "Joint", "Surroundings"]
+
+# Dimensions below a joint clear the end of the critical section, inches of paper.
+FOOT = 0.24
 
 
 @dataclass(frozen=True)
@@ -83,7 +86,9 @@ class Joint:
         """Around a bar whose end, hook or head included, keeps between two corners; draws the concrete."""
         scale = drawing.scale
         face = d_b / 2 + (ABOVE * scale if around.cover is None else around.cover)
-        bottom = -d_b / 2 - BELOW * scale if around.h is None else face - around.h
+        # A hook that is too long for its joint lies in the member.
+        lowest = min(-d_b / 2, low[1]) if low[0] < 0 else -d_b / 2
+        bottom = lowest - BELOW * scale if around.h is None else face - around.h
         made = cls(
             drawing=drawing,
             around=around,
@@ -121,10 +126,11 @@ class Joint:
         `end` is the outside of the hook or head.
         """
         drawing, around, d_b = self.drawing, self.around, self.d_b
-        section_line(drawing, self.foot, self.top, section_label, left=True)
-        lengths_along(drawing, 0.0, self.top, 0.18, *lengths.dimensions)
+        section_line(drawing, self.foot, self.top)
+        drawing.text(section_label, (0.0, self.top), (-0.06, -0.12), anchor="right", size=7.0, colour=SOFT)
+        lengths_from(drawing, self.top, lengths.dimensions)
         if around.beyond is not None:
-            drawing.dim_x(end, self.far, self.foot, -0.2)
+            drawing.dim_x(end, self.far, self.foot, -FOOT)
         off = -0.2
         if around.cover is not None:
             off = drawing.dim_y(d_b / 2, self.high, self.left, off)

@@ -3,10 +3,11 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from itertools import pairwise
 
 from calcpack.figures.drawing import GREY, Drawing, Figure, Pen
-from calcpack.figures.elevation import callout, lengths_along, plain
-from calcpack.figures.ends import BELOW, Lengths, force, label_room, of, patch, short_scale
+from calcpack.figures.elevation import callout, plain
+from calcpack.figures.ends import BELOW, Lengths, force, label_room, lengths_from, of, patch, short_scale
 from calcpack.figures.trade import Refusal, feet_inches, scale_that_fits
 
 __all__ = ["lap_detail", "lap_stagger"]
@@ -15,7 +16,7 @@ __all__ = ["lap_detail", "lap_stagger"]
 _HAIRLINE, _THINNEST = 0.6, 0.7
 # A bar thinner than this on paper shows nothing of its size: before that, the middle of a long lap is left out. Points.
 _LEGIBLE = 1.5
-_WIDE, _HIGH, _LEFT_OUT = 3.6, 2.0, 0.2
+_WIDE, _HIGH, _LEFT_OUT = 3.6, 3.0, 0.2
 _ALIGNED = Pen(0.35, GREY, (6, 4))
 
 
@@ -79,7 +80,7 @@ def lap_detail(
     refusal.positive(d_b=d_b, other_d_b=other_d_b)
     lengths.check(refusal, "lap_required", "lap_available")
     refusal.settle()
-    drawing, along = _drawing(lengths, min(d_b, other_d_b), scale)
+    drawing, along = _drawing(lengths, min(d_b, other_d_b), scale, label_room(bar_label) + label_room(other_label))
     left, right = -label_room(bar_label) * drawing.scale, lengths.drawn + label_room(other_label) * drawing.scale
     below = -_apart(drawing, d_b, other_d_b)
     high, low = d_b / 2 + 0.25 * drawing.scale, below - other_d_b / 2 - BELOW * drawing.scale
@@ -91,10 +92,12 @@ def lap_detail(
         drawing.bar([(start, below), (end, below)], other_d_b, colour=GREY)
     force(drawing, (left, 0.0), -1, compression=compression)
     force(drawing, (along(right), below), 1, compression=compression)
-    lengths_along(drawing, 0.0, high, 0.18, *((along(length), text) for length, text in lengths.dimensions))
+    lengths_from(drawing, high, [(along(length), text) for length, text in lengths.dimensions])
     callout(drawing, (left + 0.2 * drawing.scale, 0.0), d_b, low, bar_label)
     callout(drawing, (along(lengths.drawn) + 0.2 * drawing.scale, below), other_d_b, low, other_label)
-    return _lap_finished(drawing, along, lengths, (d_b, bar_label), (other_d_b, other_label), compression, lap_class, mark)
+    return _lap_finished(
+        drawing, along, lengths, (d_b, bar_label), (other_d_b, other_label), compression, lap_class, mark
+    )
 
 
 def _lap_finished(
@@ -124,18 +127,20 @@ def _bars(label: str, other: str) -> str:
     return f"{label} bars" if label == other else f"{label} with {other}"
 
 
-def _drawing(lengths: Lengths, d_b: float, scale: float) -> tuple[Drawing, _Along]:
-    """The scale, and what is left out of a lap too long for its bars to be seen."""
-    whole = short_scale(scale, lengths.reach, 0.0, _WIDE, 1.0)
+def _drawing(lengths: Lengths, d_b: float, scale: float, beside: float) -> tuple[Drawing, _Along]:
+    """The scale, and what is left out of a lap too long for its bars to be seen; `beside` the lap callouts have room."""
+    wide = min(_WIDE, max(_WIDE + 1.5 - beside, 1.5))
+    whole = short_scale(scale, lengths.reach, 0.0, wide, 1.0)
     limit = d_b * 72 / _LEGIBLE
     # Neighbouring trade scales differ by half at most, so this one is below the limit.
     larger = max(scale_that_fits(limit / 1.5, 0.0, 1.0, 1.0), 8.0)
     if scale or whole <= limit or larger >= whole:
         return Drawing(whole), _Along()
     gap = _LEFT_OUT * larger
-    excess = lengths.reach - _WIDE * larger + gap
-    marks = sorted((0.0, lengths.required, lengths.drawn))
-    start, end = max(zip(marks, marks[1:], strict=False), key=lambda part: part[1] - part[0])
+    excess = lengths.reach - wide * larger + gap
+    # Within the lap as drawn, clear of the length required.
+    marks = sorted({0.0, min(lengths.required, lengths.drawn), lengths.drawn})
+    start, end = max(pairwise(marks), key=lambda part: part[1] - part[0])
     if end - start - excess < 1.2 * larger:
         return Drawing(whole), _Along()
     middle = (start + end) / 2
@@ -189,6 +194,8 @@ def lap_stagger(
     left, right = -label_room(bar_label) * drawing.scale, reach + 0.5 * drawing.scale
     high, low = margin, -deep - BELOW * drawing.scale
     patch(drawing, (left, low), (right, high), "")
+    for x in dict.fromkeys((0.0, lap, stagger, reach)):
+        drawing.line((x, low), (x, high), pen=_ALIGNED, name="lap end")
     apart = _apart(drawing, d_b, d_b)
     for number in range(bars):
         start, y = stagger * (number % 2), -spacing * number
@@ -196,7 +203,7 @@ def lap_stagger(
         drawing.bar([(start, y - apart), (right, y - apart)], d_b, colour=GREY)
     _dimension_stagger(drawing, lap, spacing, stagger, (high, low, right), symbol)
     callout(drawing, (left + 0.2 * drawing.scale, -deep), d_b, low, bar_label)
-    said = _said(stagger, lap, symbol)
+    said = _said(stagger, symbol)
     alt = (
         f"Plan to scale{of(mark)}: {bars} parallel bars {bar_label}, {d_b:.3f} in in diameter, "
         f"{feet_inches(spacing)} apart, each lapped {plain(lap)}, class {lap_class}; {said[1]}."
@@ -204,11 +211,11 @@ def lap_stagger(
     return drawing.finish(f"Laps of class {lap_class}, {bar_label}", alt, [(f"Class {lap_class}: {said[0]}", "")])
 
 
-def _said(stagger: float, lap: float, symbol: str) -> tuple[str, str]:
+def _said(stagger: float, symbol: str) -> tuple[str, str]:
     """Where the laps are, as a line under the drawing and in words."""
     if not stagger:
         return ("all bars lapped at one section",) * 2
-    text = f"half of the bars lapped at one section, the others {plain(stagger)}"
+    text = f"every other bar lapped at one section, the rest {plain(stagger)}"
     return f"{text} ≥ {symbol} along", f"{text} along, at least the lap"
 
 
@@ -238,13 +245,10 @@ def _check_stagger(d_b: float, lap: float, spacing: float, stagger: float, bars:
 def _dimension_stagger(
     drawing: Drawing, lap: float, spacing: float, stagger: float, edges: tuple[float, float, float], symbol: str
 ) -> None:
-    """Lines through the ends of the laps, the laps, the stagger and the spacing."""
+    """The laps, the stagger and the spacing."""
     high, low, right = edges
     text = f"{symbol} = {plain(lap)}"
-    for x in dict.fromkeys((0.0, lap, stagger, stagger + lap)):
-        drawing.line((x, low), (x, high), pen=_ALIGNED, name="lap end")
-    drawing.dim_x(0.0, lap, high, 0.18, text)
+    lengths_from(drawing, high, [(lap, text), *([(stagger, f"{plain(stagger)} stagger")] if stagger else [])])
     if stagger:
         drawing.dim_x(stagger, stagger + lap, low, -0.2, text)
-        drawing.dim_x(0.0, stagger, high, 0.42, f"{plain(stagger)} stagger")
     drawing.dim_y(-spacing, 0.0, right, 0.2)

@@ -62,6 +62,42 @@ def dowels(**given: Any) -> Figure:
     return fig.dowel_detail(**(sizes | places | rest | given))
 
 
+def straight(**given: Any) -> Figure:
+    base = {"d_b": 0.75, "l_d": 43.3, "available": 60.0, "bar_label": "#6 top", "cover": 2.0, "top": True, "mark": "W1"}
+    return fig.straight_end(**(base | given))
+
+
+def hooked(**given: Any) -> Figure:
+    base: dict[str, Any] = {"d_b": 0.875, "bend": 90, "bend_diameter": 5.25, "extension": 10.5, "l_dh": 12.2}
+    rest = {"available": 17.0, "bar_label": "#7", "tail_cover": 2.0, "side_cover": 2.75, "mark": "R1"}
+    return fig.hooked_end(**(base | rest | given))
+
+
+def hooked_180(**given: Any) -> Figure:
+    base: dict[str, Any] = {"d_b": 0.375, "bend": 180, "bend_diameter": 2.25, "extension": 2.5, "l_dh": 6.0}
+    return hooked(**(base | {"available": 4.0, "bar_label": "#3", "tail_cover": None} | given))
+
+
+def headed(**given: Any) -> Figure:
+    base: dict[str, Any] = {"d_b": 0.875, "head_width": 2.25, "l_dt": 14.4, "available": 16.0, "bar_label": "#7 top"}
+    return fig.headed_detail(**(base | {"head_cover": 4.5, "cover": 2.0, "mark": "H1"} | given))
+
+
+def lap(**given: Any) -> Figure:
+    base: dict[str, Any] = {"d_b": 0.75, "lap_required": 39.7, "lap_available": 48.0, "bar_label": "#6", "mark": "W3"}
+    return fig.lap_detail(**(base | given))
+
+
+def stagger(**given: Any) -> Figure:
+    base: dict[str, Any] = {"d_b": 0.75, "lap": 25.5, "spacing": 8.0, "stagger": 30.0, "bar_label": "#6 @ 8 in"}
+    return fig.lap_stagger(**(base | given))
+
+
+# No. 18 and No. 11, the hooks of Table 25.3.1: 10 and 8 bar diameters inside, 4 beyond a bend of 180 degrees.
+NO_18: dict[str, Any] = {"d_b": 2.257, "bend_diameter": 22.57, "bar_label": "#18 top", "l_dh": 60.2}
+NO_11: dict[str, Any] = {"d_b": 1.41, "bend_diameter": 11.28, "extension": 5.64, "bar_label": "#11", "l_dh": 24.0}
+
+
 def plan(**given: Any) -> Figure:
     base: dict[str, Any] = {
         "grid_x": [("A", 0.0), ("B", 28 * FT), ("C", 58 * FT), ("D", 86 * FT)],
@@ -155,6 +191,37 @@ GALLERY: dict[str, Callable[[], Figure]] = {
     "cantilever, slab": lambda: cantilever(span=60.0, h=8.0, h_back=10.0, support_width=10.0, d_b=0.625, l_d=19.0),
     "dowels": dowels,
     "dowels, shallow": lambda: dowels(footing_h=30.0, l_dc=14.0, embedment=20.0, lap=40.0, lap_available=36.0),
+    "straight": straight,
+    "straight, bottom": lambda: straight(d_b=0.375, l_d=12.0, available=None, cover=0.75, top=False, bar_label="#3"),
+    "straight, short": lambda: straight(d_b=0.375, l_d=12.0, available=8.0, cover=None, bar_label="#3"),
+    "straight, far too short": lambda: straight(d_b=2.257, l_d=180.2, available=4.0, cover=3.0, bar_label="#18 top"),
+    "straight, much room": lambda: straight(d_b=2.257, l_d=12.0, available=300.0, top=False, bar_label="#18"),
+    "straight, compression": lambda: straight(d_b=2.257, l_d=47.26, available=47.31, cover=None, compression=True),
+    "hooked": hooked,
+    "hooked, covers": lambda: hooked(cover=2.0, bar_label="#7 top, bundle of 2"),
+    "hooked, short": lambda: hooked(**NO_18, extension=27.08, available=40.0, tail_cover=None),
+    "hooked, shorter than its bend": lambda: hooked(**NO_18, extension=27.08, available=4.0),
+    "hooked 180": hooked_180,
+    "hooked 180, shorter than its bend": lambda: hooked_180(available=2.0, tail_cover=1.5),
+    "hooked 180, out of the joint": lambda: hooked_180(**(NO_18 | {"extension": 9.03}), available=10.0, tail_cover=2.0),
+    "hooked 180, not stated": lambda: hooked_180(**NO_11, available=None, cover=3.0),
+    "headed": headed,
+    "headed, member": lambda: headed(h=24.0, side_cover=2.75),
+    "headed, short": lambda: headed(
+        d_b=0.375, head_width=1.0, l_dt=6.0, available=3.0, head_cover=None, bar_label="#3"
+    ),
+    "headed, far too short": lambda: headed(d_b=1.41, head_width=3.2, l_dt=52.0, available=1.0, cover=None),
+    "headed, not stated": lambda: headed(d_b=1.41, head_width=3.2, l_dt=52.0, available=None, head_label="round head"),
+    "lap": lap,
+    "lap, short": lambda: lap(d_b=0.375, lap_required=12.0, lap_available=10.0, bar_label="#3", compression=True),
+    "lap, broken": lambda: lap(d_b=0.375, lap_required=62.0, lap_available=70.0, bar_label="#3"),
+    "lap, far too short": lambda: lap(d_b=0.375, lap_required=82.0, lap_available=3.0, bar_label="#3"),
+    "lap, two sizes": lambda: lap(d_b=1.41, other_d_b=2.257, bar_label="#11", other_label="#18", compression=True),
+    "lap, not stated": lambda: lap(d_b=1.41, lap_required=120.0, lap_available=None, bar_label="#11"),
+    "stagger": stagger,
+    "stagger, one section": lambda: stagger(lap=33.1, stagger=0.0),
+    "stagger, short": lambda: stagger(d_b=0.375, lap=12.0, spacing=18.0, stagger=14.0, bars=5),
+    "stagger, close": lambda: stagger(d_b=1.41, lap=95.0, spacing=3.5, stagger=95.0, bars=6, bar_label="#11"),
     "plan": plan,
     "plan, small": lambda: plan(
         grid_x=[("A", 0.0), ("B", 240.0)],

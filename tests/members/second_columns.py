@@ -317,8 +317,8 @@ def k_sway(psi_A: float, psi_B: float) -> float:
 
 def effective_length(column: Row, axis: str) -> tuple[float, float]:
     """k for P_c, with the ends held by what magnifies the sway apart, and k for the limit of slenderness."""
-    psi = column.get(f"psi_{axis}_bottom"), column.get(f"psi_{axis}_top")
-    held = 1.0 if psi[0] is None else k_nonsway(*psi)  # 6.6.4.4.3: 1.0 is permitted
+    psi = [column[f"psi_{axis}_{end}"] for end in ("bottom", "top") if f"psi_{axis}_{end}" in column]
+    held = k_nonsway(*psi) if psi else 1.0  # 6.6.4.4.3: 1.0 is permitted
     if column["frame"] == "sway":
         return held, column.get(f"k_{axis}") or k_sway(*psi)
     k = column.get(f"k_{axis}") or held
@@ -428,6 +428,7 @@ class Shear:
     A_v: float
     A_v_min: float
     s_max: float
+    close: bool  # the spacing that goes with high shear
 
     @property
     def phi_V_n(self) -> float:
@@ -467,9 +468,10 @@ def shear(column: Row, edition: str, P: float, V_u: float, axis: str) -> Shear:
         times = 2.0 if A_v >= A_v_min * (1 - NOISE) else 8 * lambda_s * rho_w ** (1 / 3)
         stress = min(times * rooted + min(P / (6 * A_g), 0.05 * f_c), 5 * rooted)
     V_c, V_s = max(stress, 0.0) * b_w * d, A_v * f_yt * d / s
-    low = V_u / 0.75 - V_c <= 4 * math.sqrt(f_c) * b_w * d
-    s_max = min(d / 2, 24) if low else min(d / 4, 12)
-    return Shear(V_u, V_c, V_s, 0.75 * (V_c + 8 * math.sqrt(f_c) * b_w * d), A_v, A_v_min, s_max)
+    close = V_u / 0.75 - V_c > 4 * math.sqrt(f_c) * b_w * d
+    s_max = min(d / 4, 12) if close else min(d / 2, 24)
+    V_u_max = 0.75 * (V_c + 8 * math.sqrt(f_c) * b_w * d)
+    return Shear(V_u, V_c, V_s, V_u_max, A_v, A_v_min, s_max, close)
 
 
 # Detailing
@@ -529,7 +531,7 @@ def laterally_supported(column: Row) -> bool:
 def special(column: Row, edition: str, P_max: float) -> dict[str, float]:
     """18.7.2 to 18.7.5: what is set over what is allowed, by the names of the checks; and l_o in in."""
     h, f_c, f_y, s = column["h"], column["f_c"], column["f_y"], column["spacing"]
-    short, long = (h, h) if column["b"] is None else sorted((column["b"], h))
+    short, long = min(column["b"] or h, h), max(column["b"] or h, h)
     rho, d_b = steel_area(column) / gross_area(column), SIZES[column["size"]][0]
     heavy = P_max > 0.3 * gross_area(column) * f_c or f_c > 10000
     times = 5 if edition == "19" and f_y > 60000 else 6
@@ -541,7 +543,7 @@ def special(column: Row, edition: str, P_max: float) -> dict[str, float]:
     s_o = min(max(4 + (14 - h_x) / 3, 4.0), 6.0)
     return {
         "length l_o": max(long, (column["l_u"] or 0.0) / 6, 18.0),  # 18.7.5.1
-        "dimensions": max(12 / short, 0.4 * long / short),  # 18.7.2.1
+        "dimensions": max(12.0, 0.4 * long if column["b"] else 0.0) / short,  # 18.7.2.1
         "materials": max(3000 / f_c, f_y / (60000 if edition == "14" else 80000)),  # 19.2.1.1, Table 20.2.2.4a
         "reinforcement ratio": max(0.01 / rho, rho / 0.06),  # 18.7.4.1
         "spacing of held bars": max(h_x / (8 if all_held else 14), all_held),  # 18.7.5.2(e), (f)
