@@ -121,7 +121,7 @@ class AnchorageSheets(Scheduled):
     def _worked_out(self, mark: str) -> _Done:
         before = len(self._values)
         with self._holding() as items:
-            row, required = self._work_termination(mark)
+            row, required = self._work_termination(mark, figure=True)
         made = list(self._values.values())[before:]
         verdicts = [value for value in made if value.entry.kind == "verdict"]
         return _Done(row, required, max(verdicts, key=float, default=None), items)

@@ -58,7 +58,9 @@ def _parser() -> argparse.ArgumentParser:
     for name, run, text in _COMMANDS:
         command = commands.add_parser(name, help=text, description=text[0].upper() + text[1:] + ".")
         command.set_defaults(run=run)
-        if name != "validation":
+        if name == "compare":
+            _add_compare(command)
+        elif name != "validation":
             command.add_argument("job", nargs="?", default=".", type=Path, help="job folder (default: where you stand)")
         if name in ("check", "bars"):
             command.add_argument("--json", action="store_true", help="one JSON object on standard output")
@@ -73,6 +75,18 @@ def _parser() -> argparse.ArgumentParser:
                 told = f"write it to FILE of the job folder as {kind.upper()} (default: {default})"
                 command.add_argument(f"--{kind}", nargs="?", const=default, metavar="FILE", help=told)
     return parser
+
+
+def _add_compare(command: argparse.ArgumentParser) -> None:
+    told = "a draft or issued folder, or a package.pdf or ledger.json"
+    for name, what in (("old", "what it was"), ("new", "what it is now")):
+        command.add_argument(name, metavar=name.upper(), type=Path, help=f"{what}: {told}")
+    command.add_argument("--json", action="store_true", help="one JSON object on standard output")
+    command.add_argument("--all", action="store_true", help="list every value, not the ten that moved most")
+    command.epilog = (
+        "Exit status: 0 compared, whether or not they differ; 1 a verdict is NG in NEW that was not in OLD; 2 bad "
+        "input. Texts and figures that no value of the ledger holds are not compared."
+    )
 
 
 def _version() -> str:
@@ -154,6 +168,20 @@ def _trace(options: argparse.Namespace) -> int:
     return OK
 
 
+def _compare(options: argparse.Namespace) -> int:
+    from calcpack.package.compare import compare
+    from calcpack.package.differences import compare_json, compare_text
+    from calcpack.package.issued import read_pair
+
+    old, new = read_pair(options.old, options.new)
+    found = compare(old.ledger, new.ledger, old.sheets, new.sheets)
+    if options.json:
+        print(json.dumps(compare_json(found, old, new), indent=1, ensure_ascii=False, allow_nan=False))
+    else:
+        print(compare_text(found, old, new, options.all))
+    return NOT_OK if found.failing else OK
+
+
 def _lengths(options: argparse.Namespace) -> int:
     from calcpack.package import length_files
 
@@ -213,6 +241,7 @@ _COMMANDS: tuple[tuple[str, Callable[[argparse.Namespace], int], str], ...] = (
     ("issue", _issue, "issue the newest revision of job.toml to record/issued/"),
     ("lengths", _lengths, "print the development and lap schedule for the general notes, or write it as a table"),
     ("trace", _trace, "print where a value comes from and what it goes into"),
+    ("compare", _compare, "compare two packages: values, verdicts and sheets added, dropped and changed"),
     ("validation", _validation, "run the published cases this release is validated against"),
 )
 

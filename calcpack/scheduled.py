@@ -36,8 +36,12 @@ class Scheduled(Solving):
 
         return edition(self._job.codes.concrete)
 
-    def termination(self, mark: str) -> Value:
+    def termination(self, mark: str, figure: bool = True) -> Value:
         """Work the length a row of the anchorage schedule requires, and verify it where the row says what is available.
+
+        Parameters
+        ----------
+        figure : draw the detail to scale below its working
 
         Returns
         -------
@@ -48,18 +52,22 @@ class Scheduled(Solving):
         SheetError : no such mark
         RangeError : everything that is wrong with the row, at once
         """
-        return self._work_termination(mark)[1]
+        return self._work_termination(mark, figure)[1]
 
-    def _work_termination(self, mark: str) -> tuple[Any, Value]:
+    def _work_termination(self, mark: str, figure: bool) -> tuple[Any, Value]:
         from calcpack.job import read_terminations
         from calcpack.members.anchorage import work_termination
+        from calcpack.members.termination_figures import DRAWN, termination_figure
 
         with notebook.reading_inputs():
             rows = read_terminations(self._root)
         row = self._row("anchorage", mark, rows)
         where = f", {row.location}" if row.location else ""
         self._head("anchorage", [row], f"{row.mark}: {row.kind}, #{row.bar} bar{where}")
-        required, _ = work_termination(SheetPad(self), row, self.code)
+        pad = SheetPad(self)
+        required, _ = work_termination(pad, row, self.code)
+        if figure and row.kind in DRAWN:
+            pad.figure(lambda: termination_figure(row, float(required)))
         return row, required
 
     def column(self, mark: str) -> None:

@@ -148,3 +148,14 @@ def test_two_rows_on_one_sheet_do_not_mix(sheet: Sheet) -> None:
     below = sheet.ledger.below(second.entry.id)
     assert first.entry.id not in below
     assert {sheet.ledger[name].value for name in below if sheet.ledger[name].symbol == "d_b"} == {1.0}  # No. 8
+
+
+@pytest.mark.parametrize("mark", ["T1", "T2"])
+def test_a_termination_is_drawn_to_scale_below_its_working(sheet: Sheet, shown: Shown, mark: str) -> None:
+    required = sheet.termination(mark)
+    (figure,) = shown.of("figure")
+    assert shown.items[-1] is figure
+    assert mark in figure["caption"]
+    assert f"{float(required):.1f}" in figure["alt"]
+    sheet.termination(mark, figure=False)
+    assert len(shown.of("figure")) == 1

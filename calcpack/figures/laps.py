@@ -128,7 +128,7 @@ def _bars(label: str, other: str) -> str:
 
 
 def _drawing(lengths: Lengths, d_b: float, scale: float, beside: float) -> tuple[Drawing, _Along]:
-    """The scale, and what is left out of a lap too long for its bars to be seen; `beside` the lap callouts have room."""
+    """The scale, and what is left out of a lap too long for its bars to be seen; `beside` is what callouts take."""
     wide = min(_WIDE, max(_WIDE + 1.5 - beside, 1.5))
     whole = short_scale(scale, lengths.reach, 0.0, wide, 1.0)
     limit = d_b * 72 / _LEGIBLE

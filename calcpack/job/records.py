@@ -102,6 +102,7 @@ class ColumnRow(_Placed):
     seismic: str
     legs_x: int
     legs_y: int
+    legs_stated: bool
     ties_beyond: Transverse | None
     group: str
     source: str

@@ -152,8 +152,8 @@ _COLUMN = (
     Column("delta_s", RATIO, least=1),
     Column("story", default=""),
     Column("seismic", default="none", choices=("none", "special")),
-    Column("legs_x", default=2, parse=_legs, allowed="a number of legs, 2 or more"),
-    Column("legs_y", default=2, parse=_legs, allowed="a number of legs, 2 or more"),
+    Column("legs_x", parse=_legs, allowed="a number of legs, 2 or more"),
+    Column("legs_y", parse=_legs, allowed="a number of legs, 2 or more"),
     Column("ties_beyond", parse=parse_transverse, allowed="ties beyond the length l_o, e.g. '#4@6'"),
     Column("group", default=""),
     _SOURCE,
@@ -241,7 +241,12 @@ def _column(row: Row) -> ColumnRow:
     beyond: Transverse | None = row.values["ties_beyond"]
     size = row.sizes["cover"]
     scaled = beyond and replace(beyond, spacing=beyond.spacing * size)
-    return _record(ColumnRow, row, ties=replace(ties, spacing=ties.spacing * size), ties_beyond=scaled)
+    stated = {name: row.values[name] for name in ("legs_x", "legs_y")}
+    legs = {name: 2 if count is None else count for name, count in stated.items()}
+    known = any(count is not None for count in stated.values())
+    return _record(
+        ColumnRow, row, **legs, legs_stated=known, ties=replace(ties, spacing=ties.spacing * size), ties_beyond=scaled
+    )
 
 
 def _column_rule(table: Table) -> Iterator[Problem]:

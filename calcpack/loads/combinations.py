@@ -2,7 +2,7 @@
 
 A standard is a record of rules. A rule is applied to the loads that a member has: every choice that it leaves open
 (which roof load, which companion, the sign of wind and earthquake) becomes a combination of its own. A companion load
-is also left out, since loads that do not act have to be looked at (2.3.1).
+is also left out, and in 2 to 4 the principal load, since loads that do not act have to be looked at (2.3.1).
 """
 
 from __future__ import annotations
@@ -101,6 +101,8 @@ class Rule:
     companions : groups of companion loads; of each group one acts, or none
     fluid : F acts with the factor of D
     vertical : sign of the vertical earthquake effect E_v, 0 where there is none
+    may_rest : the principal load may be out while a companion acts; without wind or earthquake as principal load of
+        5 to 7 nothing is left of them
     """
 
     number: str
@@ -110,6 +112,7 @@ class Rule:
     companions: tuple[Terms, ...] = ()
     fluid: bool = True
     vertical: float = 0.0
+    may_rest: bool = False
 
 
 @dataclass(frozen=True)
@@ -134,6 +137,7 @@ class Combination:
     number : of the combination in the standard
     terms : each load that acts, with its factor, in the order of the label
     label : as engineers write it: ``4: 1.2D-1.0W+1.0L+0.5Lr``
+    dead : factor of D that is sustained: without E_v, which passes with the earthquake
     reasons : how a factor that the standard does not print is made
     """
 
@@ -141,6 +145,7 @@ class Combination:
     clause: Clause
     terms: Terms
     label: str
+    dead: float
     reasons: tuple[str, ...] = ()
 
 
@@ -151,9 +156,9 @@ def _rules(standard: Standard, snow: float, snow_companion: float, snow_seismic:
     live, wind, earthquake = (("L", 1.0),), (("W", 1.0),), (("E", 1.0),)
     rules = (
         Rule("1", basic, 1.4, ()),
-        Rule("2", basic, 1.2, (("L", 1.6),), (roof,)),
-        Rule("3", basic, 1.2, roof_principal, ((*live, ("W", 0.5)),)),
-        Rule("4", basic, 1.2, wind, (live, roof)),
+        Rule("2", basic, 1.2, (("L", 1.6),), (roof,), may_rest=True),
+        Rule("3", basic, 1.2, roof_principal, ((*live, ("W", 0.5)),), may_rest=True),
+        Rule("4", basic, 1.2, wind, (live, roof), may_rest=True),
         Rule("5", basic, 0.9, wind, fluid=False),
         Rule("6", seismic, 1.2, earthquake, (live, (("S", snow_seismic),)), vertical=1.0),
         Rule("7", seismic, 0.9, earthquake, vertical=-1.0),
@@ -182,11 +187,11 @@ def load_standard(name: str) -> LoadStandard:
 def combinations(standard_name: str, loads: Collection[str], settings: Settings = AS_CODE) -> tuple[Combination, ...]:
     """Every strength combination of the loads that a member has, in the order of the standard.
 
-    A combination whose principal load is not among them is not formed. H acts with 1.6, or not at all; T with 1.0, or
-    not at all (2.3.1, 2.3.4); W and E act in both directions.
+    In 2 to 4 the principal load is also out while a companion acts; combinations of equal factors stand once. H acts
+    with 1.6, or not at all; T with 1.0, or not at all (2.3.1, 2.3.4); W and E act in both directions.
 
     >>> [one.label for one in combinations("ASCE 7-16", ["D", "L"])]
-    ['1: 1.4D', '2: 1.2D+1.6L']
+    ['1: 1.4D', '2: 1.2D+1.6L', '3: 1.2D+1.0L']
 
     Raises
     ------
@@ -205,16 +210,16 @@ def combinations(standard_name: str, loads: Collection[str], settings: Settings 
 
 @cache
 def _formed(standard_name: str, loads: frozenset[str], settings: Settings) -> tuple[Combination, ...]:
-    return tuple(
-        _combination(standard_name, rule, terms, settings)
-        for rule in STANDARDS[standard_name].rules
-        for terms in _terms(rule, loads, settings)
-    )
+    formed: dict[Terms, Combination] = {}
+    for rule in STANDARDS[standard_name].rules:
+        for terms in _terms(rule, loads, settings):
+            formed.setdefault(terms, _combination(standard_name, rule, terms, settings))
+    return tuple(formed.values())
 
 
 def _combination(standard_name: str, rule: Rule, terms: Terms, settings: Settings) -> Combination:
     reasons = tuple(_reasons(standard_name, rule, terms, settings))
-    return Combination(rule.number, rule.clause, terms, name_of(rule.number, terms), reasons)
+    return Combination(rule.number, rule.clause, terms, name_of(rule.number, terms), rule.dead, reasons)
 
 
 def _terms(rule: Rule, loads: frozenset[str], settings: Settings) -> Iterator[Terms]:
@@ -225,6 +230,8 @@ def _terms(rule: Rule, loads: frozenset[str], settings: Settings) -> Iterator[Te
     choices: list[list[Terms]] = [[dead]]
     if rule.principal:
         choices.append(list(_one_of(rule.principal, loads, settings)))
+        if rule.may_rest:
+            choices[-1].append(())
     for group in rule.companions:
         reduced = tuple((load, factor * settings.live_companion if load == "L" else factor) for load, factor in group)
         choices.append([(), *_one_of(reduced, loads, settings)])
@@ -232,7 +239,9 @@ def _terms(rule: Rule, loads: frozenset[str], settings: Settings) -> Iterator[Te
         if load in loads:
             choices.append([(), ((load, factor),)])
     for parts in product(*choices):
-        yield tuple(chain.from_iterable(parts))
+        # Dead load alone is not what a rule with a principal load is for: 1.4 D holds it.
+        if not rule.principal or any(parts[1 : 2 + len(rule.companions)]):
+            yield tuple(chain.from_iterable(parts))
 
 
 def _one_of(group: Terms, loads: frozenset[str], settings: Settings) -> Iterator[Terms]:

@@ -25,12 +25,12 @@ from calcpack.members.column_slender_bending import wanted
 from calcpack.members.column_slender_frame import story_of
 from calcpack.members.column_slenderness import Slenderness, slenderness_checks
 from calcpack.members.column_special import special_checks, special_owed
-from calcpack.members.column_ties import transverse_checks
+from calcpack.members.column_ties import LATERAL_SUPPORT, transverse_checks
 from calcpack.members.interaction import Interaction, LoadPoint, end_points
 from calcpack.members.pad import FloatPad, Pad
 from calcpack.members.results import CheckResult
 
-__all__ = ["Context", "check", "owed", "work_column"]
+__all__ = ["Context", "check", "owed", "undecided", "work_column"]
 
 T = TypeVar("T")
 _FLOATS = FloatPad()
@@ -136,3 +136,13 @@ def owed(column: ColumnLike, forces: Iterable[ForceLike]) -> list[str]:
     """The checks that the column owes and that are not covered here, for the list of open items."""
     names = ["torsion"] if any(force.T for force in forces) else []
     return [*names, *(special_owed() if column.seismic == "special" else [])]
+
+
+def undecided(results: Iterable[CheckResult]) -> list[str]:
+    """What a schedule does not say that a check needs, for the list of open items."""
+    return [
+        f"{one.check}: {note} State legs_x and legs_y."
+        for one in results
+        if one.check == LATERAL_SUPPORT and not one.verdict
+        for note in one.notes
+    ]

@@ -179,6 +179,11 @@ class ColumnLike(Protocol):
         ...
 
     @property
+    def legs_stated(self) -> bool:
+        """Whether the row states legs; where it does not, crossties may be on the drawing all the same."""
+        ...
+
+    @property
     def ties_beyond(self) -> TiesLike | None:
         """Ties outside the length l_o of a column of a special moment frame."""
         ...

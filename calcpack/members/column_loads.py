@@ -174,7 +174,11 @@ def _plan(standard: str, keys: tuple[tuple[str, str], ...], settings: Settings) 
         for place, (index, factor) in enumerate(terms):
             rows[line, place], factors[line, place] = index, factor
     of_load = [np.array([load in group for load, _ in keys], float)[rows] for group in (SUSTAINED, LATERAL)]
-    return _Plan(formed, rows, factors, *(factors * mask for mask in of_load))
+    lasting = factors.copy()
+    for line, (one, *_, terms) in enumerate(formed):
+        for place, (index, _) in enumerate(terms):
+            lasting[line, place] = one.dead if keys[index][0] == "D" else factors[line, place]
+    return _Plan(formed, rows, factors, lasting * of_load[0], factors * of_load[1])
 
 
 def _with_rows(
@@ -301,7 +305,9 @@ def _worked(
             if term.load in _SYMBOLS[symbol][2]:
                 effect, value = _effect(symbol, term.row)
                 name = f"{effect}_{term.load}"
-                sums[symbol] += ((name, term.factor),)
+                # E_v is no sustained load, though it is worked with the factor of D.
+                lasting = symbol == "P_sustained" and term.load == "D"
+                sums[symbol] += ((name, rule.dead if lasting else term.factor),)
                 if name not in stated:
                     stated[name] = pad.given(name, value, _meaning(name, term.row), force_source(term.row, column))
     for reason in rule.reasons:

@@ -75,6 +75,7 @@ class Column:
     seismic: str = "none"
     legs_x: int = 2
     legs_y: int = 2
+    legs_stated: bool = False
     ties_beyond: Ties | None = None
     group: str = ""
     source: str = ""

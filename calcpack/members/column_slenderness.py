@@ -114,13 +114,24 @@ class Slenderness(Generic[T]):
         """The least moments act about one axis at a time, 6.6.4.5.4."""
         if x.moment is None and y.moment is None:
             return _at_ends(P_u, x.ends, y.ends)
-        if x.least is None or y.least is None:
+        if x.least is None and y.least is None:
             return (Point(P_u, self._signed(x, x.moment), self._signed(y, y.moment)),)
+        if x.least is None or y.least is None:
+            # A section may be weaker without the least moment than with it, as a circle of few bars.
+            return tuple(
+                Point(P_u, self._signed(x, Mx), self._signed(y, My)) for Mx, My in self._with_and_without(x, y)
+            )
         self.work.pad.reason("The least moments act about one axis at a time: two load points.")
         return (
             Point(P_u, self._signed(x, x.least), self._signed(y, y.own)),
             Point(P_u, self._signed(x, x.own), self._signed(y, y.least)),
         )
+
+    def _with_and_without(self, x: Bent[T], y: Bent[T]) -> tuple[tuple[T | None, T | None], ...]:
+        """The least moment of one axis, and that axis by its own moments; the other axis as it is."""
+        if x.least is None:
+            return (x.moment, y.least), (x.moment, y.own)
+        return (x.least, y.moment), (x.own, y.moment)
 
     def _signed(self, bent: Bent[T], moment: T | None) -> T:
         """A moment with the sign of the larger end moment; that moment itself where none is magnified."""

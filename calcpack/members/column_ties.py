@@ -15,9 +15,10 @@ from calcpack.members.results import CheckResult, measured
 from calcpack.members.sources import NOMINAL
 from calcpack.members.working import Choice
 
-__all__ = ["area_of_tie_bar", "legs_across", "legs_along", "transverse_checks", "yield_of_ties"]
+__all__ = ["LATERAL_SUPPORT", "area_of_tie_bar", "legs_across", "legs_along", "transverse_checks", "yield_of_ties"]
 
 T = TypeVar("T")
+LATERAL_SUPPORT = "lateral support of bars"
 
 
 def transverse_checks(work: ColumnWorking[T]) -> Iterator[CheckResult]:
@@ -109,14 +110,14 @@ def _lateral_support(work: ColumnWorking[T]) -> CheckResult:
         values = {"x_clear": _widest(work, loose).s_clear, "x_clear_max": work.value("x_clear_max")}
         sides = " and ".join(unshown)
         notes = work.note(f"Bars between the corners {sides} need crossties; the schedule does not show any.")
-        return work.result("lateral support of bars", _clause(work), None, values, notes)
+        return work.result(LATERAL_SUPPORT, _clause(work), None, values, notes, met=not work.column.legs_stated)
     return _bars_between_held_ones(work, loose)
 
 
 def _every_bar_held(work: ColumnWorking[T], why: str) -> CheckResult:
     limit = work.value("x_clear_max")
     work.pad.reason(why)
-    result = work.result("lateral support of bars", _clause(work), 0.0, {"x_clear_max": limit})
+    result = work.result(LATERAL_SUPPORT, _clause(work), 0.0, {"x_clear_max": limit})
     return replace(result, values={"x_clear": measured("x_clear", 0.0), **result.values})
 
 
@@ -129,8 +130,8 @@ def _bars_between_held_ones(work: ColumnWorking[T], loose: Sequence[Face[T]]) ->
         work.pad.reason("The bars between held bars touch them.")
     else:
         work.pad.reason("A bar between two held bars stands without a crosstie where it is close to them.")
-        ratio = max(ratio, work.verify("lateral support of bars", widest.s_clear, limit, _clause(work)))
-    return work.result("lateral support of bars", _clause(work), ratio, values)
+        ratio = max(ratio, work.verify(LATERAL_SUPPORT, widest.s_clear, limit, _clause(work)))
+    return work.result(LATERAL_SUPPORT, _clause(work), ratio, values)
 
 
 def _alternate_bars(work: ColumnWorking[T], face: Face[T]) -> float:

@@ -65,7 +65,9 @@ def check_members(job: Job) -> JobChecks:
         own = by_mark.get(row.mark, [])
         factored = attempt(errors, combined, row, own, job.codes.loads, job.combining)
         if factored is not None:
-            results += attempt(errors, column.check, row, factored, context) or []
+            checked = attempt(errors, column.check, row, factored, context) or []
+            results += checked
+            owed += [(f"{row.mark}: {name}", row.file) for name in column.undecided(checked)]
             owed += [(f"{row.mark}: {name}", row.file) for name in column.owed(row, own)]
     for termination in terminations:
         found = attempt(errors, anchorage.check, termination, code)

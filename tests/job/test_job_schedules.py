@@ -281,6 +281,7 @@ def test_columns_and_their_defaults(put: Put) -> None:
         seismic="none",
         legs_x=2,
         legs_y=2,
+        legs_stated=False,
         ties_beyond=None,
         group="",
         source="",
@@ -309,8 +310,16 @@ def test_columns_of_frames_and_special_frames(put: Put) -> None:
     found = read_columns(put("columns.csv", f"{header}\n{C1},1,0.8,2,0,0.4,1.1,S2,special,3,4,#3@6,corner\n"))[0]
     assert (found.psi_x_bottom, found.psi_x_top, found.psi_y_bottom, found.psi_y_top) == (1, 0.8, 2, 0)
     assert (found.beta_dns, found.delta_s, found.story, found.seismic) == (0.4, 1.1, "S2", "special")
-    assert (found.legs_x, found.legs_y, found.group) == (3, 4, "corner")
+    assert (found.legs_x, found.legs_y, found.legs_stated, found.group) == (3, 4, True, "corner")
     assert found.ties_beyond == Transverse("ties", 3, 6.0, "#3@6")
+
+
+@pytest.mark.parametrize(("cells", "legs"), [(",", (2, 2, False)), ("2,", (2, 2, True)), (",3", (2, 3, True))])
+def test_legs_that_are_stated_are_told_from_those_that_are_not(
+    put: Put, cells: str, legs: tuple[int, int, bool]
+) -> None:
+    (found,) = read_columns(put("columns.csv", f"{COLUMNS},legs_x,legs_y\n{C1},{cells}\n"))
+    assert (found.legs_x, found.legs_y, found.legs_stated) == legs
 
 
 def test_ties_beyond_are_in_the_unit_of_cover(put: Put) -> None:

@@ -27,7 +27,7 @@ from calcpack.loads.combinations import (
 from calcpack.loads.standards import ASCE_7_16, ASCE_7_22
 
 # from memory: ASCE 7-16 2.3.1 (1 to 5) and 2.3.6 (6 and 7), every choice written out by hand. Companions are also
-# absent, wind and earthquake act in both directions; a combination without its principal load is not listed.
+# absent, and in 2 to 4 the principal load while a companion acts; wind and earthquake act in both directions.
 BY_HAND_16 = """
 1: 1.4D
 2: 1.2D+1.6L   2: 1.2D+1.6L+0.5Lr   2: 1.2D+1.6L+0.5S   2: 1.2D+1.6L+0.5R
@@ -38,6 +38,9 @@ BY_HAND_16 = """
 4: 1.2D-1.0W   4: 1.2D-1.0W+0.5Lr   4: 1.2D-1.0W+0.5S   4: 1.2D-1.0W+0.5R
 4: 1.2D+1.0W+1.0L  4: 1.2D+1.0W+1.0L+0.5Lr  4: 1.2D+1.0W+1.0L+0.5S  4: 1.2D+1.0W+1.0L+0.5R
 4: 1.2D-1.0W+1.0L  4: 1.2D-1.0W+1.0L+0.5Lr  4: 1.2D-1.0W+1.0L+0.5S  4: 1.2D-1.0W+1.0L+0.5R
+2: 1.2D+0.5Lr  2: 1.2D+0.5S  2: 1.2D+0.5R
+3: 1.2D+1.0L   3: 1.2D+0.5W  3: 1.2D-0.5W
+4: 1.2D+1.0L+0.5Lr  4: 1.2D+1.0L+0.5S  4: 1.2D+1.0L+0.5R
 5: 0.9D+1.0W   5: 0.9D-1.0W
 6: 1.2D+1.0E   6: 1.2D+1.0E+1.0L    6: 1.2D+1.0E+0.2S   6: 1.2D+1.0E+1.0L+0.2S
 6: 1.2D-1.0E   6: 1.2D-1.0E+1.0L    6: 1.2D-1.0E+0.2S   6: 1.2D-1.0E+1.0L+0.2S
@@ -54,6 +57,9 @@ BY_HAND_22 = """
 4: 1.2D-1.0W   4: 1.2D-1.0W+0.5Lr   4: 1.2D-1.0W+0.3S   4: 1.2D-1.0W+0.5R
 4: 1.2D+1.0W+1.0L  4: 1.2D+1.0W+1.0L+0.5Lr  4: 1.2D+1.0W+1.0L+0.3S  4: 1.2D+1.0W+1.0L+0.5R
 4: 1.2D-1.0W+1.0L  4: 1.2D-1.0W+1.0L+0.5Lr  4: 1.2D-1.0W+1.0L+0.3S  4: 1.2D-1.0W+1.0L+0.5R
+2: 1.2D+0.5Lr  2: 1.2D+0.3S  2: 1.2D+0.5R
+3: 1.2D+1.0L   3: 1.2D+0.5W  3: 1.2D-0.5W
+4: 1.2D+1.0L+0.5Lr  4: 1.2D+1.0L+0.3S  4: 1.2D+1.0L+0.5R
 5: 0.9D+1.0W   5: 0.9D-1.0W
 6: 1.2D+1.0E   6: 1.2D+1.0E+1.0L    6: 1.2D+1.0E+0.15S  6: 1.2D+1.0E+1.0L+0.15S
 6: 1.2D-1.0E   6: 1.2D-1.0E+1.0L    6: 1.2D-1.0E+0.15S  6: 1.2D-1.0E+1.0L+0.15S
@@ -99,9 +105,10 @@ def test_combinations_are_those_of_a_second_derivation(standard: str, others: se
 
 @BOTH
 def test_the_list_by_hand_is_whole(standard: str) -> None:
-    # 1, then 1 x 4, 3 x 4, 2 x 2 x 4, 2, 2 x 2 x 2 and 2 by counting the choices of each combination.
-    assert len(second_derivation(standard, {*"DLSRWE", "Lr"})) == 1 + 4 + 12 + 16 + 2 + 8 + 2
-    assert len(labels(standard, set(LOADS))) == 45 * 2 * 2
+    # 1, then 1 x 4, 3 x 4, 2 x 2 x 4, 2, 2 x 2 x 2 and 2 by counting the choices of each combination; without the
+    # principal load 3 in each of 2, 3 and 4, as those of 4 that 2 and 3 hold already stand once.
+    assert len(second_derivation(standard, {*"DLSRWE", "Lr"})) == 1 + 4 + 12 + 16 + 2 + 8 + 2 + 3 * 3
+    assert len(labels(standard, set(LOADS))) == 54 * 2 * 2
 
 
 @BOTH
@@ -117,7 +124,8 @@ def test_label_terms_and_clause_agree(standard: str, others: set[str]) -> None:
 
 # published: Wight & MacGregor, Reinforced Concrete, example 12-2, pp. 595-597, factors its column with 1.2D + 1.6L.
 def test_dead_and_live_load_alone() -> None:
-    assert labels("ASCE 7-16", {"D", "L"}) == labels("ASCE 7-22", {"D", "L"}) == ["1: 1.4D", "2: 1.2D+1.6L"]
+    assert labels("ASCE 7-16", {"D", "L"}) == labels("ASCE 7-22", {"D", "L"})
+    assert labels("ASCE 7-16", {"D", "L"}) == ["1: 1.4D", "2: 1.2D+1.6L", "3: 1.2D+1.0L"]
 
 
 def test_dead_load_is_always_checked_alone() -> None:
@@ -125,10 +133,18 @@ def test_dead_load_is_always_checked_alone() -> None:
     assert labels("ASCE 7-16", {"D", "F"}) == ["1: 1.4D+1.4F"]
 
 
-def test_a_combination_without_its_principal_load_is_not_formed() -> None:
-    assert {name[0] for name in labels("ASCE 7-16", {"D", "W"})} == {"1", "4", "5"}
-    assert {name[0] for name in labels("ASCE 7-16", {"D", "S"})} == {"1", "3"}
+def test_a_principal_load_is_out_only_where_a_companion_acts() -> None:
+    assert labels("ASCE 7-16", {"D", "W"})[1:3] == ["3: 1.2D+0.5W", "3: 1.2D-0.5W"]
+    assert labels("ASCE 7-16", {"D", "S"}) == ["1: 1.4D", "2: 1.2D+0.5S", "3: 1.2D+1.6S"]
     assert {name[0] for name in labels("ASCE 7-16", {"D", "E"})} == {"1", "6", "7"}
+
+
+def test_equal_factors_stand_once() -> None:
+    # 1.2 D + 1.0 L is combination 3 without a roof load, and 4 without wind.
+    for having in (["D", "L", "W"], ["D", "L", "S", "W", "Lr"]):
+        terms = [one.terms for one in combinations("ASCE 7-16", having)]
+        assert len(set(terms)) == len(terms)
+        assert (("D", 1.2), ("L", 1.0)) in terms
 
 
 def test_only_companion_live_load_is_reduced() -> None:

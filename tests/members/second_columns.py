@@ -28,6 +28,7 @@ E_S = 29e6
 EPS_CU = 0.003  # 22.2.2.1
 AT_THE_EDGE = 1e-7  # in: how far the block's edge moves while it takes hold of a bar
 NOISE = 1e-9
+FAR = 25.0  # powers of e between the neutral axes looked at and the depth of the section
 
 
 # The section
@@ -147,7 +148,7 @@ def _misses(section: Section, bearing: float, level: Level, inside: Vector | Non
     scale = 2 * section.reach(bearing)
 
     def misses(unknown: Vector) -> list[float]:
-        c = scale * math.exp(min(max(float(unknown[1]), -9), 9))
+        c = scale * math.exp(min(max(float(unknown[1]), -FAR), FAR))
         P, M_x, M_y, phi = section.nominal(float(unknown[0]), c, inside)
         turned = math.atan2(M_x, M_y) - bearing
         return [(turned + math.pi) % (2 * math.pi) - math.pi, level(P, math.hypot(M_x, M_y), phi)]
@@ -164,7 +165,7 @@ def _one(section: Section, bearing: float, level: Level) -> tuple[float, float]:
             return float(tried.x[0]), float(tried.x[1])
 
     def depth_at(theta: float) -> float:
-        return float(brentq(lambda depth: misses(np.array([theta, depth]))[1], -9, 9, xtol=1e-12))
+        return float(brentq(lambda depth: misses(np.array([theta, depth]))[1], -FAR, FAR, xtol=1e-12))
 
     def miss(theta: float) -> float:
         return misses(np.array([theta, depth_at(theta)]))[0]

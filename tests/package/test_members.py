@@ -172,3 +172,25 @@ def test_the_list_of_givens_is_read_with_the_tables(tmp_path: Path) -> None:
     places = " ".join(problem.where for problem in caught.value.problems)
     assert "givens.toml" in places
     assert "anchorage.csv" in places
+
+
+@pytest.mark.parametrize(
+    ("legs", "verdict", "said"),
+    [
+        ("", "", ["C9: lateral support of bars: Bars between the corners along x and along y need crossties"]),
+        ("2", "NG", []),
+        ("4", "OK", []),
+    ],
+)
+def test_crossties_that_the_schedule_is_silent_of_are_an_open_item(
+    tmp_path: Path, legs: str, verdict: str, said: list[str]
+) -> None:
+    columns = (
+        "mark,shape,b [in],h [in],bars,ties,cover [in],f_c [psi],f_y [psi],legs_x,legs_y\n"
+        f"C9,rectangular,30,30,12-#8 (4x4),#3@14,1.5,4000,60000,{legs},{legs}\n"
+    )
+    checks = check_members(load(make_job(tmp_path / "legs", columns=columns)))
+    (support,) = [one for one in checks.results if one.check == "lateral support of bars"]
+    assert support.verdict == verdict
+    assert [text.split(";")[0] for text, _ in checks.owed] == said
+    assert all(text.endswith("State legs_x and legs_y.") for text, _ in checks.owed)
