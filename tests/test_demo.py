@@ -309,7 +309,7 @@ def test_every_link_of_the_html_has_its_target(issued: Path) -> None:
 
 
 def unprinted(notebooks: list[dict[str, Any]]) -> set[str]:
-    """Entries of workings that are told in one line, or in one cell of a table: their values are in the ledger alone."""
+    """Entries of workings that are told in one line, or in one cell of a table: the ledger alone holds them."""
     found: set[str] = set()
     for item in (item for notebook in notebooks for item in stored_items(notebook)):
         if item["type"] in ("note", "tabulated"):

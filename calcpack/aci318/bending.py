@@ -39,7 +39,7 @@ __all__ = [
 ]
 
 _STRENGTH = (ACI_318_14("22.4.1.1"), ACI_318_19("22.4.1.1"))
-_RAY = Clause("distance from the origin, moments over the size of the section")
+_RAY = Clause("ratio on a ray")
 _RECIPROCAL = Clause("reciprocal load method, B. Bresler, ACI Journal 57, 1960")
 _GEOMETRY = Clause("geometry of the section")
 

@@ -13,14 +13,12 @@ from calcpack.units import convert
 
 __all__ = ["from_to", "percent_text"]
 
-_NUMBER = re.compile(r"−?[\d,]*\.?\d+(?:×10[⁰¹²³⁴⁵⁶⁷⁸⁹⁻]+)?")
+_NUMBER = re.compile(r"^−?[\d,]*\.?\d+(?:×10[⁰¹²³⁴⁵⁶⁷⁸⁹⁻]+)?")
 
 
 def percent_text(percent: float) -> str:
-    """A change in per cent with its sign: three figures, four where the first is a one."""
-    size = rounded(abs(percent), 3)
-    figures = 4 if size.lstrip("0.,").startswith("1") and abs(percent) >= 1 else 3
-    return f"{'−' if percent < 0 else '+'}{rounded(abs(percent), figures)} %" if percent else "0 %"
+    """A change in per cent with its sign, to three figures."""
+    return f"{'−' if percent < 0 else '+'}{rounded(abs(percent), 3)} %" if percent else "0 %"
 
 
 def from_to(change: Change) -> tuple[str, str]:
@@ -45,7 +43,7 @@ def _alike(before: str, after: str) -> bool:
         return True
     if _unit(before) != _unit(after) or not (_NUMBER.match(before) and _NUMBER.match(after)):
         return False
-    return abs(parse_number(before) - parse_number(after)) <= 0.5001 * max(last_place(before), last_place(after))
+    return abs(parse_number(before) - parse_number(after)) < 0.4999 * max(last_place(before), last_place(after))
 
 
 def _unit(shown: str) -> str:

@@ -40,7 +40,7 @@ def test_every_line_sets_a_symbol_of_the_notation_table(any_formula: Formula) ->
 # What no clause states, and how a sheet cites it.
 NO_CLAUSE = {
     "geometry of the section",
-    "distance from the origin, moments over the size of the section",
+    "ratio on a ray",
     "reciprocal load method, B. Bresler, ACI Journal 57, 1960",
 }
 

@@ -86,7 +86,9 @@ def _line(index: int) -> st.SearchStrategy[Step]:
 programs = st.integers(1, 12).flatmap(lambda size: st.tuples(*map(_line, range(size))))
 
 
-def run(program: tuple[Step, ...], edited: int = -1, front: bool = False, sourced: bool = False) -> tuple[Book, list[str]]:
+def run(
+    program: tuple[Step, ...], edited: int = -1, front: bool = False, sourced: bool = False
+) -> tuple[Book, list[str]]:
     """The ledger of a program, and the ids of its lines.
 
     Parameters

@@ -90,11 +90,12 @@ def test_lines_in_another_order_are_the_same_lines() -> None:
     assert matched(old.ledger, new.ledger) == {"C-01/h": "C-01/h.2", "C-01/h.2": "C-01/h"}
 
 
-def test_alike_entries_keep_their_ids() -> None:
-    book = Book()
-    for _ in range(3):
-        book.given("h", 16.0)
-    assert matched(book.ledger, book.ledger) == {entry.id: entry.id for entry in book.ledger}
+def test_alike_entries_keep_their_ids_where_one_of_them_is_edited() -> None:
+    old, new = Book(), Book()
+    for book, first in ((old, 16.0), (new, 18.0)):
+        for value in (first, 16.0, 16.0):
+            book.given("h", value)
+    assert matched(old.ledger, new.ledger) == {entry.id: entry.id for entry in old.ledger}
 
 
 @pytest.mark.parametrize(
