@@ -68,6 +68,7 @@ def special_owed() -> list[str]:
         "columns stronger than beams at the joints (18.7.3)",
         "shear that goes with the probable moments, and V_c of zero within l_o (18.7.6)",
         "lap splices within the centre half of the column (18.7.4)",
+        "length of bars developed within half of the column, by ACI 318-19 (18.7.4.3)",
         "anchorage of hoops and alternation of crossties (18.7.5.2)",
     ]
 
