@@ -47,7 +47,7 @@ def _bar_spacing(work: ColumnWorking[T]) -> CheckResult:
         ratio = work.verify("clear spacing of longitudinal bars", least, closest.s_clear, clause)
         return work.result("bar spacing", clause, ratio, values, notes)
     # No clear spacing is left to compare with. The least one is at least 1.5 d_b, more than d_b between centres.
-    reason = f"Bars {closest.name} overlap or touch: the least clear spacing exceeds even the spacing of their centres."
+    reason = f"Bars {closest.name} touch: the least clear spacing exceeds even the spacing of their centres."
     pitch = work.work(Choice(closest.pitch, reason), **closest.own)
-    work.verify("clear spacing of longitudinal bars, which overlap", least, pitch, clause)
+    work.verify("clear spacing of longitudinal bars, which touch", least, pitch, clause)
     return work.result("bar spacing", clause, None, values, notes, met=False)

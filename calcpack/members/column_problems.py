@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
+from math import pi, sin
 
 from calcpack.aci318.bars import BARS, bar
 from calcpack.aci318.editions import Edition
@@ -90,3 +91,19 @@ def _fit(column: ColumnLike) -> Iterator[Problem]:
     least = column.h if column.b is None else min(column.b, column.h)
     if least <= taken:
         yield Problem(f"{least:,g} in across", f"more than cover, ties and bars take: {taken:,g} in")
+        return
+    d_b = bar(column.bars.size).d_b
+    for name, pitch in _pitches(column, column.cover + d_bt + d_b / 2):
+        if pitch < d_b * (1 - 1e-9):
+            given = f"bars: {column.bars.count}-#{column.bars.size}, which overlap {name}"
+            allowed = f"{d_b:,g} in or more between centres, not {pitch:,.4g} in"
+            yield Problem(given, allowed, "use fewer or smaller bars, or a larger section")
+
+
+def _pitches(column: ColumnLike, inset: float) -> Iterator[tuple[str, float]]:
+    """Distances between the centres of neighbouring bars, by where they stand."""
+    if column.b is None or column.bars.n_x is None or column.bars.n_y is None:
+        yield "on the circle", (column.h - 2 * inset) * sin(pi / column.bars.count)
+        return
+    yield "along x", (column.b - 2 * inset) / (column.bars.n_x - 1)
+    yield "along y", (column.h - 2 * inset) / (column.bars.n_y - 1)

@@ -120,7 +120,7 @@ class Interaction:
 
 
 def section_of(column: ColumnLike) -> Section:
-    """The section of a column; its bars as points, since bars that overlap are told by the check of their spacing."""
+    """The section of a column; its bars as points, since bars that touch are told by the check of their spacing."""
     from calcpack.mechanics import circle, rectangle
 
     bars = [(x, y, bar(column.bars.size).A_b) for x, y in bar_positions(column)]

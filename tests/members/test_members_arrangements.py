@@ -46,7 +46,11 @@ def one_by_one(column: Column, forces: Sequence[Any], context: Context, around: 
         if column.b is not None:
             layouts = [(2 * (x + y) - 4, x, y) for x, y in product(around, around)]
         for count, n_x, n_y in layouts:
-            results = check(replace(column, bars=Bars(count, size, n_x, n_y)), forces, context)
+            try:
+                results = check(replace(column, bars=Bars(count, size, n_x, n_y)), forces, context)
+            except RangeError as error:
+                assert "overlap" in str(error)
+                continue
             if all(result.verdict != "NG" for result in results):
                 yield as_checked(column, Bars(count, size, n_x, n_y), results)
 

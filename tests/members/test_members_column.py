@@ -150,9 +150,9 @@ def test_bar_spacing(each: Edition) -> None:
     assert one(replace(TIED, aggregate=1.5), "bar spacing", each).values["s_clear_min"][0] == pytest.approx(2.0)
 
 
-def test_bars_that_overlap_are_ng_without_a_ratio(each: Edition) -> None:
-    crowded = replace(TIED, bars=Bars(24, 11, 7, 7), b=12.0)
-    result = one(crowded, "bar spacing", each)
+def test_bars_that_touch_are_ng_without_a_ratio(each: Edition) -> None:
+    # Hand: 2 (1.5 + 0.375) + 7 * 1.41 = 13.62 in take seven bars that touch.
+    result = one(replace(TIED, bars=Bars(24, 11, 7, 7), b=13.62), "bar spacing", each)
     assert (result.ratio, result.verdict) == (None, "NG")
 
 

@@ -121,3 +121,17 @@ def test_sizes_that_are_not_made(size: int, name: str | None, each: Edition) -> 
 def test_strength_beyond_what_the_stress_block_is_used_for() -> None:
     with pytest.raises(RangeError, match=r"f_c = 20,001 psi +allowed up to 20,000 psi"):
         check(replace(TIED, f_c=20_001.0), FORCES, Context(edition("ACI 318-19")))
+
+
+@pytest.mark.parametrize(
+    ("column", "given"),
+    [
+        # Hand: (12 - 3.75 - 1.41)/6 = 1.14 in; 7 sin(pi/24) = 0.9137 in between bars of 1 in.
+        (replace(TIED, b=12.0, bars=Bars(24, 11, 7, 7)), r"24-#11, which overlap along x +1\.41 in .*, not 1\.14 in"),
+        (replace(TIED, h=12.0, bars=Bars(24, 11, 7, 7)), r"24-#11, which overlap along y +1\.41 in .*, not 1\.14 in"),
+        (replace(ROUND, h=12.0, bars=Bars(24, 8)), r"24-#8, which overlap on the circle +1 in .*, not 0\.9137 in"),
+    ],
+)
+def test_bars_that_overlap_are_refused(column: Column, given: str) -> None:
+    with pytest.raises(RangeError, match=given):
+        check(column, FORCES, Context(edition("ACI 318-19")))
