@@ -48,9 +48,8 @@ def one_by_one(column: Column, forces: Sequence[Any], context: Context, around: 
         for count, n_x, n_y in layouts:
             try:
                 results = check(replace(column, bars=Bars(count, size, n_x, n_y)), forces, context)
-            except RangeError as error:
-                assert "overlap" in str(error)
-                continue
+            except RangeError:
+                continue  # Bars that overlap are refused.
             if all(result.verdict != "NG" for result in results):
                 yield as_checked(column, Bars(count, size, n_x, n_y), results)
 
