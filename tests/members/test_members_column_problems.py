@@ -52,8 +52,8 @@ def accepted(column: Column, one: Edition) -> bool:
         ({"bars": Bars(9, 9, 3, 3)}, False),
         ({"bars": Bars(10, 9, 3, 4)}, True),
         # Hand: 2 * (1.5 + 0.375 + 1.128) = 6.006 in are taken.
-        ({"b": 6.006}, False),
-        ({"b": 6.007}, True),
+        ({"b": 6.006, "bars": Bars(4, 9, 2, 2)}, False),
+        ({"b": 6.007, "bars": Bars(4, 9, 2, 2)}, True),
         ({"b": 30.0, "h": 6.0}, False),
     ],
 )
@@ -74,7 +74,9 @@ def test_limits_of_a_rectangular_column(changes: dict[str, Any], fine: bool, eac
         ({"ties": Ties("spiral", 4, 0.51)}, True),
         # Hand: 2 * (1.5 + 0.5 + 1) = 6 in are taken.
         ({"h": 6.0}, False),
-        ({"h": 6.01}, True),
+        # Three bars of 1 in touch on a circle of 1/sin(60 deg) = 1.1547 in: 5 + 1.1547 in.
+        ({"h": 6.154, "bars": Bars(3, 8)}, False),
+        ({"h": 6.155, "bars": Bars(3, 8)}, True),
     ],
 )
 def test_limits_of_a_circular_column(changes: dict[str, Any], fine: bool, each: Edition) -> None:

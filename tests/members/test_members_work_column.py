@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from dataclasses import replace
 from pathlib import Path
 from typing import Any
@@ -382,8 +383,19 @@ SIZES = st.sampled_from(sorted(BARS))
 TIE_SIZES = st.sampled_from([3, 4, 5])
 
 
+def apart(column: Column) -> bool:
+    """Whether the bars do not overlap: a column whose bars do is refused."""
+    inset = column.cover + BARS[column.ties.size].d_b + BARS[column.bars.size].d_b / 2
+    if column.b is None:
+        pitches = [(column.h - 2 * inset) * math.sin(math.pi / column.bars.count)]
+    else:
+        faces = ((column.b, column.bars.n_x or 2), (column.h, column.bars.n_y or 2))
+        pitches = [(size - 2 * inset) / (count - 1) for size, count in faces]
+    return min(pitches) >= BARS[column.bars.size].d_b
+
+
 @st.composite
-def rectangular(draw: st.DrawFn) -> Column:
+def _rectangular(draw: st.DrawFn) -> Column:
     n_x, n_y = draw(st.integers(2, 7)), draw(st.integers(2, 7))
     size = draw(SIZES)
     width = st.sampled_from([16.0, 20.0]) | st.floats(14.0, 40.0)
@@ -401,7 +413,7 @@ def rectangular(draw: st.DrawFn) -> Column:
 
 
 @st.composite
-def circular(draw: st.DrawFn) -> Column:
+def _circular(draw: st.DrawFn) -> Column:
     kind = draw(st.sampled_from(["ties", "spiral"]))
     return replace(
         ROUND,
@@ -414,6 +426,14 @@ def circular(draw: st.DrawFn) -> Column:
         f_yt=draw(st.none() | st.sampled_from([40_000.0, 60_000.0, 100_000.0])),
         aggregate=draw(st.none() | st.floats(0.375, 2.0)),
     )
+
+
+def rectangular() -> st.SearchStrategy[Column]:
+    return _rectangular().filter(apart)
+
+
+def circular() -> st.SearchStrategy[Column]:
+    return _circular().filter(apart)
 
 
 COLUMNS = rectangular() | circular()
